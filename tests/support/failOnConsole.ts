@@ -1,0 +1,15 @@
+import { afterEach, beforeEach, expect, vi } from 'vitest';
+
+/** Unexpected console output fails the test that caused it: a warning nobody reads is a defect nobody mends. */
+const methods = ['error', 'warn', 'log'] as const;
+let spies: ReturnType<typeof vi.spyOn>[] = [];
+
+beforeEach(() => {
+  spies = methods.map((method) => vi.spyOn(console, method));
+});
+
+afterEach(() => {
+  const calls = spies.flatMap((spy) => spy.mock.calls);
+  for (const spy of spies) spy.mockRestore();
+  expect(calls, 'console output during the test').toEqual([]);
+});
