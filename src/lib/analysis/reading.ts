@@ -7,7 +7,14 @@ export const NO_ROTATION_REASONS = ['silence', 'hum', 'nothing-periodic', 'too-s
 export type NoRotationReason = (typeof NO_ROTATION_REASONS)[number];
 
 /** What the reader of a reading should know about the sound it came from. */
-export const READING_WARNINGS = ['clipped', 'low-level', 'dead-channel', 'opposite-channels', 'header-mismatch', 'partial'] as const;
+export const READING_WARNINGS = [
+  'clipped',
+  'low-level',
+  'dead-channel',
+  'opposite-channels',
+  'header-mismatch',
+  'partial',
+] as const;
 export type ReadingWarning = (typeof READING_WARNINGS)[number];
 
 /** A shaft speed with its 95 % interval, all in rpm; `lowRpm` ≤ `shaftSpeedRpm` ≤ `highRpm`. */
