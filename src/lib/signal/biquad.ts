@@ -24,13 +24,25 @@ interface SectionDesign {
  */
 export function highPassBiquad(design: SectionDesign): Biquad {
   const { cosine, alpha } = angleOf(design);
-  return normalised((1 + cosine) / 2, -(1 + cosine), (1 + cosine) / 2, cosine, alpha);
+  return normalised(
+    (1 + cosine) / 2,
+    -(1 + cosine),
+    (1 + cosine) / 2,
+    cosine,
+    alpha,
+  );
 }
 
 /** Second-order low-pass, 12 dB per octave, unit gain at 0 Hz. Reference: as `highPassBiquad`. */
 export function lowPassBiquad(design: SectionDesign): Biquad {
   const { cosine, alpha } = angleOf(design);
-  return normalised((1 - cosine) / 2, 1 - cosine, (1 - cosine) / 2, cosine, alpha);
+  return normalised(
+    (1 - cosine) / 2,
+    1 - cosine,
+    (1 - cosine) / 2,
+    cosine,
+    alpha,
+  );
 }
 
 /** Second-order band-pass with unit gain at the centre. Reference: as `highPassBiquad`. */
@@ -45,7 +57,10 @@ export function bandPassBiquad(design: SectionDesign): Biquad {
  * @param samples Float32Array or Float64Array, shape [sampleCount]; overwritten
  * @returns the same array
  */
-export function filterInPlace<Samples extends Float32Array | Float64Array>(samples: Samples, sections: readonly Biquad[]): Samples {
+export function filterInPlace<Samples extends Float32Array | Float64Array>(
+  samples: Samples,
+  sections: readonly Biquad[],
+): Samples {
   for (const { b0, b1, b2, a1, a2 } of sections) {
     let delay1 = 0;
     let delay2 = 0;
@@ -60,15 +75,32 @@ export function filterInPlace<Samples extends Float32Array | Float64Array>(sampl
   return samples;
 }
 
-function angleOf({ frequencyHz, sampleRateHz, quality }: SectionDesign): { cosine: number; alpha: number } {
+function angleOf({ frequencyHz, sampleRateHz, quality }: SectionDesign): {
+  cosine: number;
+  alpha: number;
+} {
   if (!(frequencyHz > 0 && frequencyHz < sampleRateHz / 2)) {
-    throw new RangeError(`biquad: frequencyHz must be in (0, ${sampleRateHz / 2}), got ${frequencyHz}`);
+    throw new RangeError(
+      `biquad: frequencyHz must be in (0, ${sampleRateHz / 2}), got ${frequencyHz}`,
+    );
   }
   const angle = (2 * Math.PI * frequencyHz) / sampleRateHz;
   return { cosine: Math.cos(angle), alpha: Math.sin(angle) / (2 * quality) };
 }
 
-function normalised(b0: number, b1: number, b2: number, cosine: number, alpha: number): Biquad {
+function normalised(
+  b0: number,
+  b1: number,
+  b2: number,
+  cosine: number,
+  alpha: number,
+): Biquad {
   const a0 = 1 + alpha;
-  return { b0: b0 / a0, b1: b1 / a0, b2: b2 / a0, a1: (-2 * cosine) / a0, a2: (1 - alpha) / a0 };
+  return {
+    b0: b0 / a0,
+    b1: b1 / a0,
+    b2: b2 / a0,
+    a1: (-2 * cosine) / a0,
+    a2: (1 - alpha) / a0,
+  };
 }
