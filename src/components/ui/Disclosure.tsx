@@ -1,0 +1,17 @@
+import type { ReactNode } from 'react';
+
+interface Props {
+  readonly summary: ReactNode;
+  readonly isOpen?: boolean;
+  readonly children: ReactNode;
+}
+
+/** Something that stays closed until it is wanted; works before any script. */
+export function Disclosure({ summary, isOpen = false, children }: Props) {
+  return (
+    <details open={isOpen} className="border-t border-line">
+      <summary className="flex items-center py-2 touch">{summary}</summary>
+      <div className="pb-4">{children}</div>
+    </details>
+  );
+}
