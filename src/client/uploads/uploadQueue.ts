@@ -1,7 +1,7 @@
 import { ApiError, unreachableError } from '#client/api/ApiError.ts';
 import type { UploadedRecording, UploadOptions } from '#client/api/uploadRecording.ts';
 import type { UploadFields } from '#lib/schemas/recording.ts';
-import { isUnfinished, type Upload } from './upload.ts';
+import { isUnfinished, type Upload, type UploadState } from './upload.ts';
 
 /** Files on their way at once: more would only slow each other down on a phone's uplink. */
 export const SIMULTANEOUS_MAXIMUM_COUNT = 2;
@@ -12,6 +12,8 @@ const MILLISECONDS_PER_SECOND = 1000;
 interface UploadQueueParts {
   readonly send: (options: UploadOptions) => Promise<UploadedRecording>;
   readonly createKey: () => string;
+  /** What is already known to be refused is not sent. */
+  readonly refusalBeforeSending: (file: File) => ApiError | null;
 }
 
 /**
@@ -41,7 +43,9 @@ export class UploadQueue {
 
   add(files: readonly File[], fields: UploadFields): void {
     const added = files.map((file): Upload => {
-      return { key: this.#parts.createKey(), file, fields, state: { phase: 'waiting' }, brokenAttemptCount: 0 };
+      const error = this.#parts.refusalBeforeSending(file);
+      const state: UploadState = error ? { phase: 'refused', error } : { phase: 'waiting' };
+      return { key: this.#parts.createKey(), file, fields, state, brokenAttemptCount: 0 };
     });
     this.#replace([...this.#uploads, ...added]);
     this.#startWaiting();

@@ -1,6 +1,7 @@
 import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest';
 import { ApiError, unreachableError } from '#client/api/ApiError.ts';
 import type { UploadedRecording, UploadOptions } from '#client/api/uploadRecording.ts';
+import { refusalBeforeSending } from '#client/uploads/refusalBeforeSending.ts';
 import { UploadQueue } from '#client/uploads/uploadQueue.ts';
 
 interface Attempt extends UploadOptions {
@@ -35,11 +36,14 @@ function queueOnHeldNetwork() {
         },
       });
     });
-  const queue = new UploadQueue({ send, createKey: () => `key-${String((keyCount += 1))}` });
+  const createKey = () => `key-${String((keyCount += 1))}`;
+  const queue = new UploadQueue({ send, createKey, refusalBeforeSending });
   return { queue, attempts };
 }
 
-const settled = () => vi.advanceTimersByTimeAsync(0);
+async function settled() {
+  await vi.advanceTimersByTimeAsync(0);
+}
 const file = (name: string, byteCount = 4) => new File([new Uint8Array(byteCount)], name);
 const phases = (queue: UploadQueue) => queue.snapshot().map(({ state }) => state.phase);
 const refusal = new ApiError({ code: 'no-audio', status: 422, detail: 'The file has no sound track.' });
@@ -137,6 +141,13 @@ describe('UploadQueue', () => {
     await vi.advanceTimersByTimeAsync(60_000);
     expect(phases(queue)).toEqual(['cancelled']);
     expect(attempts).toHaveLength(1);
+  });
+
+  it('does not send an empty file and lets the next one go', () => {
+    const { queue, attempts } = queueOnHeldNetwork();
+    queue.add([file('a.wav', 0), file('b.wav')], {});
+    expect(phases(queue)).toEqual(['refused', 'sending']);
+    expect(attempts.map((attempt) => attempt.file.name)).toEqual(['b.wav']);
   });
 
   it('dismisses finished lines only', async () => {
