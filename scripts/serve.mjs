@@ -1,0 +1,116 @@
+import { createServer } from 'node:http';
+import { join, resolve } from 'node:path';
+import { pathToFileURL } from 'node:url';
+import sirv from 'sirv';
+
+/**
+ * The http server around Astro's middleware: node scripts/serve.mjs WEB_FOLDER. It holds what a framework cannot:
+ * time-outs, slow bodies, static files, forwarded headers, and an end that lets running uploads finish.
+ */
+const HEADERS_LIMIT_SECONDS = 20;
+const KEEP_ALIVE_SECONDS = 65;
+/** A body slower than this over a whole window is given up: it holds a connection for nothing. */
+const SLOWEST_BODY_BYTES_PER_SECOND = 256;
+const SLOW_BODY_WINDOW_SECONDS = 60;
+const STOP_GRACE_SECONDS = 30;
+const ONE_YEAR_SECONDS = 31_536_000;
+
+const webFolder = resolve(process.argv[2] ?? 'dist/web');
+const host = process.env.HOST ?? '127.0.0.1';
+const port = Number(process.env.PORT ?? 4321);
+const trustsProxy = process.env.RIPPLEBENCH_TRUST_PROXY === 'on';
+
+const { handler } = await import(pathToFileURL(join(webFolder, 'server/entry.mjs')).href);
+const serveStatic = sirv(join(webFolder, 'client'), {
+  setHeaders(response, path) {
+    response.setHeader('X-Content-Type-Options', 'nosniff');
+    if (path.startsWith('/_astro/')) {
+      response.setHeader('Cache-Control', `public, max-age=${String(ONE_YEAR_SECONDS)}, immutable`);
+    }
+  },
+});
+
+function sendProblem(response, status, code, detail, headers = {}) {
+  if (response.headersSent) {
+    response.destroy();
+    return;
+  }
+  const body = JSON.stringify({ type: `urn:ripplebench:problem:${code}`, title: detail, status, code, detail, requestId: '' });
+  response.writeHead(status, { 'Content-Type': 'application/problem+json', Connection: 'close', ...headers });
+  response.end(body);
+}
+
+/** Watches a request body and answers 408 when it trickles. */
+function watchBody(request, response) {
+  let bytesBefore = request.socket.bytesRead;
+  const timer = setInterval(() => {
+    const receivedBytes = request.socket.bytesRead - bytesBefore;
+    bytesBefore = request.socket.bytesRead;
+    if (receivedBytes >= SLOWEST_BODY_BYTES_PER_SECOND * SLOW_BODY_WINDOW_SECONDS) return;
+    clearInterval(timer);
+    response.once('close', () => request.destroy());
+    sendProblem(response, 408, 'request-timeout', 'The upload was too slow. Try again on a better connection.');
+  }, SLOW_BODY_WINDOW_SECONDS * 1000);
+  timer.unref();
+  for (const event of ['end', 'close']) request.once(event, () => clearInterval(timer));
+}
+
+const eventStreams = new Set();
+let isStopping = false;
+
+function rememberEventStream(response) {
+  const writeHead = response.writeHead;
+  response.writeHead = function writeHeadAndRemember(...headArguments) {
+    const result = writeHead.apply(this, headArguments);
+    if (String(response.getHeader('content-type')).startsWith('text/event-stream')) {
+      eventStreams.add(response);
+      response.once('close', () => eventStreams.delete(response));
+    }
+    return result;
+  };
+}
+
+const server = createServer((request, response) => {
+  if (isStopping) {
+    sendProblem(response, 503, 'shutting-down', 'The server is restarting. Try again in a moment.', { 'Retry-After': '5' });
+    return;
+  }
+  if (!trustsProxy) {
+    for (const name of ['x-forwarded-for', 'x-forwarded-proto', 'x-forwarded-host', 'x-forwarded-port', 'forwarded']) {
+      delete request.headers[name];
+    }
+  }
+  if (request.url?.startsWith('/_image')) {
+    sendProblem(response, 404, 'not-found', 'There is nothing here.');
+    return;
+  }
+  if (request.headers['content-length'] !== undefined || request.headers['transfer-encoding'] !== undefined) {
+    watchBody(request, response);
+  }
+  rememberEventStream(response);
+  const render = () => {
+    Promise.resolve(handler(request, response)).catch((error) => {
+      process.stderr.write(`${error?.stack ?? error}\n`);
+      sendProblem(response, 500, 'internal', 'Something went wrong here. Try again; if it stays, tell your bench owner.');
+    });
+  };
+  if (request.method === 'GET' || request.method === 'HEAD') serveStatic(request, response, render);
+  else render();
+});
+
+server.headersTimeout = HEADERS_LIMIT_SECONDS * 1000;
+server.keepAliveTimeout = KEEP_ALIVE_SECONDS * 1000;
+// Slow uploads on a phone may take long; `watchBody` ends those that do not move.
+server.requestTimeout = 0;
+server.listen(port, host);
+
+for (const signal of ['SIGINT', 'SIGTERM']) {
+  process.on(signal, () => {
+    if (isStopping) return;
+    isStopping = true;
+    for (const response of eventStreams) response.end();
+    server.close(() => process.exit(0));
+    server.closeIdleConnections();
+    setTimeout(() => server.closeAllConnections(), STOP_GRACE_SECONDS * 1000).unref();
+  });
+}
