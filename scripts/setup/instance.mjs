@@ -1,5 +1,5 @@
 import { createHash, randomBytes } from 'node:crypto';
-import { existsSync, mkdirSync, readFileSync, statSync, writeFileSync } from 'node:fs';
+import { chmodSync, existsSync, mkdirSync, readFileSync, statSync, writeFileSync } from 'node:fs';
 import { createServer } from 'node:net';
 import { tmpdir } from 'node:os';
 import { dirname, join, resolve } from 'node:path';
@@ -44,7 +44,10 @@ function loadSecrets(dataFolder) {
  */
 export function createInstance(environment = process.env) {
   const dataFolder = resolve(PROJECT_FOLDER, environment.RIPPLEBENCH_DATA ?? '.data');
-  mkdirSync(dataFolder, { recursive: true, mode: 0o755 });
+  if (!existsSync(dataFolder)) {
+    mkdirSync(dataFolder, { recursive: true });
+    chmodSync(dataFolder, 0o755);
+  }
   const secrets = loadSecrets(dataFolder);
   const host = environment.HOST ?? '127.0.0.1';
   const databasePort = Number(environment.RIPPLEBENCH_DB_PORT ?? 33306);

@@ -1,7 +1,7 @@
 import { spawn } from 'node:child_process';
-import { chownSync, closeSync, existsSync, mkdirSync, openSync, readFileSync, writeFileSync } from 'node:fs';
+import { chmodSync, chownSync, closeSync, existsSync, mkdirSync, openSync, readFileSync, writeFileSync } from 'node:fs';
 import { connect } from 'node:net';
-import { join } from 'node:path';
+import { dirname, join } from 'node:path';
 import { progress, SetupError } from './progress.mjs';
 import { findProgram } from './programs.mjs';
 import { run } from './run.mjs';
@@ -21,11 +21,15 @@ function systemUser(name) {
 
 /** A folder that belongs to the service's own user when we are root. */
 function serviceFolder(path, userName) {
-  const isNew = !existsSync(path);
+  // Whatever the umask says, the service's user must be able to walk in.
+  if (!existsSync(dirname(path))) {
+    mkdirSync(dirname(path), { recursive: true });
+    chmodSync(dirname(path), 0o755);
+  }
   mkdirSync(path, { recursive: true, mode: 0o750 });
   const user = isRoot ? systemUser(userName) : null;
   if (user) chownSync(path, user.uid, user.gid);
-  return { path, user, isNew };
+  return { path, user };
 }
 
 /** @returns {Promise<boolean>} whether something listens on the port */
@@ -37,22 +41,25 @@ export function isListening(port) {
   });
 }
 
-async function waitUntilListening(service) {
+/** Waits for the server's own word: it may listen before it can serve, and must not be stopped before then. */
+async function waitUntilReady(service) {
   const until = performance.now() + START_LIMIT_SECONDS * 1000;
+  const newLines = () => readFileSync(service.log, 'utf8').slice(service.logStart);
   while (performance.now() < until) {
     if (service.child.exitCode !== null || service.child.signalCode !== null) break;
-    if (await isListening(service.port)) return;
+    if (service.readyLine.test(newLines())) return;
     await new Promise((done) => setTimeout(done, 50));
   }
-  const lines = readFileSync(service.log, 'utf8').trimEnd().split('\n').slice(-LAST_LOG_LINE_COUNT);
+  const lines = newLines().trimEnd().split('\n').slice(-LAST_LOG_LINE_COUNT);
   throw new SetupError(`${service.name} did not start on port ${service.port}. Its last words:\n${lines.join('\n')}`);
 }
 
 /** Starts a server in a process group of its own, so that Ctrl-C reaches it only through us, in order. */
-async function startService({ name, port, program, programArguments, log, user }) {
+async function startService({ name, port, program, programArguments, log, readyLine, user }) {
   if (await isListening(port)) {
     throw new SetupError(`Port ${port} for ${name} is taken. Stop what uses it, or set another port (see README.md).`);
   }
+  const logStart = existsSync(log) ? readFileSync(log, 'utf8').length : 0;
   const output = openSync(log, 'a');
   const child = spawn(program, programArguments, {
     stdio: ['ignore', output, output],
@@ -60,8 +67,8 @@ async function startService({ name, port, program, programArguments, log, user }
     ...(user ?? {}),
   });
   closeSync(output);
-  const service = { name, port, child, log };
-  await waitUntilListening(service);
+  const service = { name, port, child, log, logStart, readyLine };
+  await waitUntilReady(service);
   return service;
 }
 
@@ -95,6 +102,7 @@ async function startMariadb({ serverFolder, dataFolder, databasePort, secrets })
     port: databasePort,
     program: /** @type {string} */ (findProgram('mariadbd')),
     log: join(dataFolder, 'mariadb.log'),
+    readyLine: /ready for connections/,
     user: null,
     programArguments: [
       '--no-defaults',
@@ -139,6 +147,7 @@ async function startRedis({ serverFolder, dataFolder, redisPort, secrets }) {
     port: redisPort,
     program: /** @type {string} */ (findProgram('redis-server')),
     log: join(dataFolder, 'redis.log'),
+    readyLine: /Ready to accept connections/,
     user,
     programArguments: [configuration],
   });
