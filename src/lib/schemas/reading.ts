@@ -67,7 +67,7 @@ export const reviewRequest = z
   .check(
     z.refine((review) => (review.decision === 'choose') === (review.rpm !== undefined), {
       path: ['rpm'],
-      message: 'Give rpm when another speed is chosen, and only then.',
+      error: 'Give rpm when another speed is chosen, and only then.',
     }),
   );
 export type ReviewRequest = z.infer<typeof reviewRequest>;

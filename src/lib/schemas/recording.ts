@@ -26,7 +26,7 @@ export const uploadFields = z
   .check(
     z.refine((fields) => (fields.rpmMin ?? 0) < (fields.rpmMax ?? Number.POSITIVE_INFINITY), {
       path: ['rpmMax'],
-      message: 'Must be above rpmMin.',
+      error: 'Must be above rpmMin.',
     }),
   );
 export type UploadFields = z.infer<typeof uploadFields>;
