@@ -67,12 +67,13 @@ export const recordingView = z.object({
   supplyVolts: z.nullable(z.number()),
   currentAmps: z.nullable(z.number()),
   note: z.nullable(z.string()),
+  /** What the file says of itself; null where only decoding can tell. */
   media: z.object({
     container: z.string(),
-    codec: z.string(),
-    sampleRateHz: z.number(),
-    channelCount: z.int(),
-    durationSeconds: z.number(),
+    codec: z.nullable(z.string()),
+    sampleRateHz: z.nullable(z.number()),
+    channelCount: z.nullable(z.int()),
+    durationSeconds: z.nullable(z.number()),
   }),
   uploadedBy: z.object({ id: z.uuid(), name: z.string() }),
   createdAt: z.string(),

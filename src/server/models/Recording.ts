@@ -45,10 +45,11 @@ export class Recording extends Model<InferAttributes<Recording>, InferCreationAt
   declare duplicateOf: CreationOptional<string | null>;
   declare idempotencyKey: CreationOptional<Buffer | null>;
   declare container: string;
-  declare codec: string;
-  declare sampleRateHz: number;
-  declare channelCount: number;
-  declare durationSeconds: number;
+  /** What the file says of itself; null where only decoding can tell. */
+  declare codec: CreationOptional<string | null>;
+  declare sampleRateHz: CreationOptional<number | null>;
+  declare channelCount: CreationOptional<number | null>;
+  declare durationSeconds: CreationOptional<number | null>;
   declare mediaWarnings: CreationOptional<ReadingWarning[]>;
   declare eventsPerTurn: CreationOptional<number | null>;
   declare orders: CreationOptional<number[] | null>;
@@ -100,10 +101,10 @@ Recording.init(
     duplicateOf: optionalReferenceColumn(),
     idempotencyKey: optionalBinaryColumn(),
     container: { type: DataTypes.STRING(40), allowNull: false },
-    codec: { type: DataTypes.STRING(40), allowNull: false },
-    sampleRateHz: { type: DataTypes.DOUBLE, allowNull: false },
-    channelCount: { type: DataTypes.SMALLINT.UNSIGNED, allowNull: false },
-    durationSeconds: { type: DataTypes.DOUBLE, allowNull: false },
+    codec: { type: DataTypes.STRING(40), allowNull: true, defaultValue: null },
+    sampleRateHz: optionalNumberColumn(),
+    channelCount: { type: DataTypes.SMALLINT.UNSIGNED, allowNull: true, defaultValue: null },
+    durationSeconds: optionalNumberColumn(),
     mediaWarnings: { type: DataTypes.JSON, allowNull: false, defaultValue: [] },
     eventsPerTurn: optionalNumberColumn(),
     orders: { type: DataTypes.JSON, allowNull: true, defaultValue: null },

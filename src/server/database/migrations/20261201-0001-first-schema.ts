@@ -144,10 +144,11 @@ export const steps: readonly MigrationStep[] = [
     `duplicate_of ${ID} NULL`,
     'idempotency_key VARBINARY(512) NULL',
     'container VARCHAR(40) NOT NULL',
-    'codec VARCHAR(40) NOT NULL',
-    'sample_rate_hz DOUBLE NOT NULL',
-    'channel_count SMALLINT UNSIGNED NOT NULL',
-    'duration_seconds DOUBLE NOT NULL',
+    // null: not known before the sound is decoded
+    'codec VARCHAR(40) NULL',
+    'sample_rate_hz DOUBLE NULL',
+    'channel_count SMALLINT UNSIGNED NULL',
+    'duration_seconds DOUBLE NULL',
     'media_warnings JSON NOT NULL',
     // What the person said about the sound; null = ask the build
     'events_per_turn DOUBLE NULL',
