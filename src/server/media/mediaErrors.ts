@@ -13,7 +13,6 @@ export const MEDIA_REFUSAL_CODES = [
   'no-audio',
   'bad-header',
   'unsupported-rate',
-  'unsupported-codec',
   'too-many-channels',
   'too-short',
   'too-long',
@@ -23,15 +22,7 @@ export const MEDIA_REFUSAL_CODES = [
 export type MediaRefusalCode = (typeof MEDIA_REFUSAL_CODES)[number];
 
 /** Why an acknowledged recording failed: what only decoding shows. Permanent like the refusals. */
-export const MEDIA_FAILURE_CODES = [
-  'cannot-decode',
-  'truncated',
-  'too-short',
-  'too-long',
-  'unsupported-rate',
-  'not-finite',
-  'out-of-range',
-] as const;
+export const MEDIA_FAILURE_CODES = ['cannot-decode', 'truncated', 'too-short', 'too-long', 'unsupported-rate'] as const;
 export type MediaFailureCode = (typeof MEDIA_FAILURE_CODES)[number];
 
 /**
@@ -85,7 +76,7 @@ export function tooShortMessage(durationSeconds: number): string {
 
 /** "Too long: 4 h 0 min; limit 10 min. …"; null when the length is not known. */
 export function tooLongMessage(durationSeconds: number | null): string {
-  const length = durationSeconds === null ? 'more than the limit' : wholeMinutes(durationSeconds);
+  const length = durationSeconds === null ? 'more than the limit' : spokenDuration(durationSeconds);
   return `Too long: ${length}; limit ${MAXIMUM_DURATION_SECONDS / 60} min. Cut out the part to measure and upload that.`;
 }
 
@@ -100,8 +91,9 @@ export function tooManyChannelsMessage(channelCount: number): string {
   return `The sound has ${channelCount} channels; at most ${MAXIMUM_CHANNELS} are read. Save it as mono or stereo.`;
 }
 
-/** Rounds up, so that a length just over a limit never reads as the limit itself. */
-function wholeMinutes(durationSeconds: number): string {
-  const minutes = Math.ceil(durationSeconds / 60);
-  return minutes < 60 ? `${minutes} min` : `${Math.floor(minutes / 60)} h ${minutes % 60} min`;
+/** "10 min 1 s" or, from an hour on, "4 h 0 min"; rounded up to seconds, so that no excess reads as the limit itself. */
+function spokenDuration(durationSeconds: number): string {
+  const seconds = Math.ceil(durationSeconds);
+  const minutes = Math.floor(seconds / 60);
+  return minutes < 60 ? `${minutes} min ${seconds % 60} s` : `${Math.floor(minutes / 60)} h ${minutes % 60} min`;
 }
