@@ -96,3 +96,20 @@ export function notFound(what: string): ServerError {
     detail: `There is no such ${what} here. Check the address, or whether you are signed in to the right bench.`,
   });
 }
+
+/** The record is readable, but not this act on it. */
+export function forbidden(): ServerError {
+  return new ServerError({
+    code: 'forbidden',
+    detail: 'Your role in this bench, or your token, does not allow that. Ask an owner or a lead of the bench.',
+  });
+}
+
+export function invalidFields(fieldErrors: readonly FieldError[]): ServerError {
+  const lines = fieldErrors.map(({ field, message }) => (field === '' ? message : `${field}: ${message}`));
+  return new ServerError({
+    code: 'invalid-fields',
+    detail: lines.join(' '),
+    fieldErrors,
+  });
+}

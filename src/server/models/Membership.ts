@@ -22,7 +22,22 @@ export class Membership extends Model<InferAttributes<Membership>, InferCreation
   declare updatedAt: CreationOptional<Date>;
   declare bench?: NonAttribute<Bench>;
   declare account?: NonAttribute<Account>;
+
+  /** Oldest first: the first bench is the one a page opens with. */
+  static async listByAccount(accountId: string): Promise<MembershipWithBench[]> {
+    const memberships = await Membership.findAll({
+      where: { accountId },
+      include: [{ association: 'bench', required: true }],
+      order: [
+        ['createdAt', 'ASC'],
+        ['id', 'ASC'],
+      ],
+    });
+    return memberships as MembershipWithBench[];
+  }
 }
+
+export type MembershipWithBench = Membership & { bench: Bench };
 
 Membership.init(
   {

@@ -1,0 +1,29 @@
+import type { APIContext, MiddlewareHandler } from 'astro';
+import { v4 as uuidV4 } from 'uuid';
+import { clock } from '#server/clock.ts';
+import { logger } from '#server/logger.ts';
+import { countRequest } from '#server/metrics.ts';
+import { requestContext } from '#server/requestContext.ts';
+
+/** Names the request, times it, and leaves one log line. Neither holds a query string, an address or a name. */
+export const observe: MiddlewareHandler = (context, next) => {
+  const requestId = context.locals.requestId ?? uuidV4();
+  context.locals.requestId = requestId;
+  return requestContext.run({ requestId }, async () => {
+    const startSeconds = clock.monotonicSeconds();
+    const response = await next();
+    response.headers.set('x-request-id', requestId);
+    record(context, response, clock.monotonicSeconds() - startSeconds);
+    return response;
+  });
+};
+
+function record({ request, routePattern, locals }: APIContext, response: Response, elapsedSeconds: number): void {
+  const line = {
+    method: request.method,
+    route: routePattern,
+    status: response.status,
+  };
+  countRequest(line, elapsedSeconds);
+  logger().debug({ ...line, elapsedSeconds, requestId: locals.requestId }, 'request');
+}
