@@ -1,4 +1,5 @@
 import { Transform } from 'node:stream';
+import { UNNAMED_FILE } from '#lib/schemas/fileName.ts';
 import { invalidFields, ServerError } from '#server/errors.ts';
 
 /**
@@ -11,9 +12,6 @@ const HEADER_END = Buffer.from('\r\n\r\n');
 const CLOSING_DASHES = Buffer.from('--');
 const EMPTY_FILE_NAME = /(;\s*filename=)""/i;
 const NUL_IN_DISPOSITION = /^content-disposition:.*\0/im;
-
-/** Stands for a name that is empty or says nothing. */
-export const UNNAMED_FILE = 'unnamed';
 
 export class PartHeaderFilter extends Transform {
   readonly #delimiter: Buffer;
