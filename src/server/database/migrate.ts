@@ -2,6 +2,7 @@ import { QueryTypes } from 'sequelize';
 import { SequelizeStorage, Umzug } from 'umzug';
 import { database } from './connection.ts';
 import * as firstSchema from './migrations/20261201-0001-first-schema.ts';
+import * as workers from './migrations/20261201-0002-workers.ts';
 
 /** One DDL statement that may be run again: MariaDB commits DDL at once, so a migration killed half-way resumes here. */
 export type MigrationStep = string;
@@ -12,7 +13,7 @@ interface Migration {
 }
 
 /** Oldest first. Listed by hand so that the bundle carries them; a test compares the list with the folder. */
-export const MIGRATIONS: readonly Migration[] = [firstSchema];
+export const MIGRATIONS: readonly Migration[] = [firstSchema, workers];
 
 const MIGRATION_LOCK = 'ripplebench.migrate';
 const LOCK_WAIT_SECONDS = 60;

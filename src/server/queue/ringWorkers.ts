@@ -45,6 +45,8 @@ export async function ringWorkers(payload: JobPayload<'analyseRecording'>): Prom
   let timer: NodeJS.Timeout | undefined;
   try {
     bell ??= openBell();
+    // During an outage that is already noted, waiting for the connection would only cost the caller time.
+    if (!isReachable && bell.connection.status !== 'ready') return;
     const { options } = JOBS.analyseRecording;
     const ring = bell.queue.add('analyseRecording', payload, { ...options, jobId: analyseRecordingJobId(payload) });
     const budget = new Promise<never>((_, reject) => {
