@@ -43,7 +43,8 @@ export function refuseContentEncoding(request: Request): void {
   });
 }
 
-async function readBytes(request: Request): Promise<Buffer> {
+/** The raw body, up to the limit. @throws ServerError too-large */
+export async function readBytes(request: Request): Promise<Buffer> {
   if (request.body === null) return Buffer.alloc(0);
   const chunks: Uint8Array[] = [];
   let byteCount = 0;
