@@ -1,7 +1,7 @@
 import type { StateShape } from '#components/ui/StateMark.tsx';
 import type { NoRotationReason } from '#lib/analysis/reading.ts';
 import { UNSURE_BELOW_CONFIDENCE } from '#lib/analysis/reading.ts';
-import { numberText } from '#lib/format/numberText.ts';
+import { numberText, plainNumberText } from '#lib/format/numberText.ts';
 import { uncertainSentence } from '#lib/format/uncertainText.ts';
 import type { ReadingView } from '#lib/schemas/reading.ts';
 import type { RecordingView } from '#lib/schemas/recording.ts';
@@ -36,6 +36,12 @@ export function speedOf({ reading, review }: Pick<RecordingView, 'reading' | 're
   const factor = review?.decision === 'choose' && review.rpm !== null ? review.rpm / reading.rpm : 1;
   // A chosen multiple keeps the relative width: the line was measured as sharply, only its meaning changed.
   return { rpm: reading.rpm * factor, rpmLow: reading.rpmLow * factor, rpmHigh: reading.rpmHigh * factor };
+}
+
+/** What a row calls a recording: its build and voltage, or else its file. */
+export function recordingName({ build, fileName, supplyVolts }: RecordingView): string {
+  const name = build?.name ?? fileName;
+  return supplyVolts === null ? name : `${name}, ${plainNumberText(supplyVolts)} V`;
 }
 
 /** Where a recording stands. */

@@ -11,7 +11,9 @@ export function SessionClaim({ result }: { result: SessionResultView }) {
     return (
       <div aria-live="polite">
         <p className="text-title">{result.points.length === 0 ? 'Nothing measured yet' : 'No result yet'}</p>
-        <Sentence>{<GroupedText text={result.sentence} />}</Sentence>
+        <Sentence>
+          <GroupedText text={result.sentence} />
+        </Sentence>
       </div>
     );
   }
@@ -21,7 +23,7 @@ export function SessionClaim({ result }: { result: SessionResultView }) {
     <div aria-live="polite">
       <p className="text-small text-muted">{figureName(key)}</p>
       <p>
-        <span className="figures text-figure font-medium">
+        <span className="figure-mark figures text-figure leading-none">
           <GroupedText text={value} />
         </span>
         <span className="ml-3 text-title">{figure.unit}</span>

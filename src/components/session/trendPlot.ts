@@ -7,7 +7,8 @@ import type { SpeedAxis } from './speedAxis.ts';
 
 export type TrendPoint = SessionResultView['points'][number];
 /** What the recordings are laid out by. */
-export type TrendBy = 'order' | 'supply';
+export const TREND_ORDERS = ['order', 'supply'] as const;
+export type TrendBy = (typeof TREND_ORDERS)[number];
 
 /** A recording with its place on the horizontal axis; places ascend. */
 export interface PlacedPoint {

@@ -1,14 +1,10 @@
-/** The conditions of a recording that is already here. */
-export interface PastRecording {
-  readonly sessionId: string | null;
-  readonly build: { readonly id: string; readonly name: string } | null;
-  readonly supplyVolts: number | null;
-}
+import type { RecordingView } from '#lib/schemas/recording.ts';
 
-export interface NextRecording {
-  readonly sessionId: string | null;
-  readonly build: { readonly id: string; readonly name: string };
-  readonly supplyVolts: number | null;
+/** The conditions of a recording that is already here. */
+export type PastRecording = Pick<RecordingView, 'sessionId' | 'build' | 'supplyVolts'>;
+
+export interface NextRecording extends PastRecording {
+  readonly build: NonNullable<RecordingView['build']>;
 }
 
 /** Steps such as 4.5 + 1.5 must not show the rounding of binary fractions. */
