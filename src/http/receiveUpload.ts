@@ -9,8 +9,7 @@ import type { ReceivedUpload } from '#server/usecases/receivedUpload.ts';
 import type { FormTexts } from './upload/parseUploadFields.ts';
 import { PartHeaderFilter } from './upload/partHeaderFilter.ts';
 import { UploadEngine } from './upload/UploadEngine.ts';
-import { malformedForm, notMultipart, tooLarge, tooSlow, uploadRefusal } from './upload/uploadRefusals.ts';
-import { watchPace } from './upload/watchPace.ts';
+import { malformedForm, notMultipart, tooLarge, uploadRefusal } from './upload/uploadRefusals.ts';
 
 const FIELD_MAXIMUM_BYTES = 64 * 1024;
 const FIELD_MAXIMUM_COUNT = 24;
@@ -37,7 +36,7 @@ export interface ReceivedForm {
  *
  * @returns the file, which the caller commits or discards, and the text fields
  * @throws ServerError too-large, storage-full, storage-unavailable, unsupported-media-type, bad-request,
- *   invalid-fields, request-timeout, or what `beforeFile` throws; then nothing is left behind
+ *   invalid-fields, or what `beforeFile` throws; then nothing is left behind
  */
 export async function receiveUpload(request: Request, options: ReceiveUploadOptions): Promise<ReceivedForm> {
   const { body, boundary } = requireMultipart(request);
@@ -76,21 +75,7 @@ class FormReader {
     this.engine = new UploadEngine(storage, this.#fail);
   }
 
-  async read(contentType: string): Promise<FormTexts> {
-    const stopWatch = watchPace({
-      receivedBytes: () => this.#receivedBytes,
-      onTooSlow: () => {
-        this.#fail(tooSlow());
-      },
-    });
-    try {
-      return await this.#parse(contentType);
-    } finally {
-      stopWatch();
-    }
-  }
-
-  #parse(contentType: string): Promise<FormTexts> {
+  read(contentType: string): Promise<FormTexts> {
     // multer asks whether there is a body by these headers; the real ones were judged before.
     const headers = { 'content-type': contentType, 'transfer-encoding': 'chunked' };
     const body: MulterBody = Object.assign(this.#filter, { headers });

@@ -36,6 +36,7 @@ export const ERROR_CATALOGUE = {
   'too-long': { status: 422, title: 'The recording is too long' },
   'bad-header': { status: 422, title: 'The file header is not valid' },
   'unsupported-rate': { status: 422, title: 'The sample rate is not supported' },
+  'probe-timed-out': { status: 503, title: 'The file could not be examined in time', isRetryable: true },
   'too-many-channels': { status: 422, title: 'The recording has too many channels' },
   // Files that failed after they were acknowledged (stored with the recording)
   'cannot-decode': { status: 422, title: 'The recording cannot be decoded' },

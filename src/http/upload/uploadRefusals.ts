@@ -12,13 +12,6 @@ export function tooLarge(): ServerError {
   });
 }
 
-export function tooSlow(): ServerError {
-  return new ServerError({
-    code: 'request-timeout',
-    detail: 'The upload came too slowly and was stopped; nothing was stored. Try again with a better connection.',
-  });
-}
-
 export function notMultipart(): ServerError {
   return new ServerError({
     code: 'unsupported-media-type',

@@ -5,6 +5,7 @@ import {
   type InferCreationAttributes,
   Model,
   type NonAttribute,
+  type Transaction,
 } from 'sequelize';
 import type { ReadingWarning } from '#lib/analysis/reading.ts';
 import type { AnalysisSettings } from '#lib/analysis/settings.ts';
@@ -76,6 +77,25 @@ export class Recording extends Model<InferAttributes<Recording>, InferCreationAt
   declare build?: NonAttribute<Build | null>;
   declare uploader?: NonAttribute<Account>;
   declare currentReading?: NonAttribute<Reading | null>;
+
+  static loadByIdempotencyKey(
+    key: { readonly benchId: string; readonly idempotencyKey: Buffer },
+    transaction: Transaction | null = null,
+  ): Promise<Recording | null> {
+    return Recording.findOne({ where: key, transaction });
+  }
+
+  /** The first of the bench with these very bytes. */
+  static loadOldestBySha256(
+    bytes: { readonly benchId: string; readonly sha256: Buffer },
+    transaction: Transaction | null = null,
+  ): Promise<Recording | null> {
+    const order: [string, string][] = [
+      ['createdAt', 'ASC'],
+      ['id', 'ASC'],
+    ];
+    return Recording.findOne({ where: bytes, order, transaction });
+  }
 }
 
 Recording.init(
@@ -121,7 +141,8 @@ Recording.init(
     decoderCrashCount: { type: DataTypes.INTEGER.UNSIGNED, allowNull: false, defaultValue: 0 },
     fenceToken: optionalBinaryColumn(),
     leaseExpiresAt: optionalTimeColumn(),
-    queuedAt: { type: timeColumn(), allowNull: false, defaultValue: DataTypes.NOW },
+    // Left to the database, whose clock the queue is judged by
+    queuedAt: { type: timeColumn() },
     errorCode: { type: DataTypes.STRING(64), allowNull: true, defaultValue: null },
     errorMessage: { type: DataTypes.STRING(1000), allowNull: true, defaultValue: null },
     currentReadingId: optionalReferenceColumn(),

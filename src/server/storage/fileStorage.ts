@@ -1,8 +1,9 @@
 import { randomUUID } from 'node:crypto';
+import { createReadStream } from 'node:fs';
 import { chmod, mkdir, open, readdir, rename, rm, stat, statfs } from 'node:fs/promises';
 import { dirname, join } from 'node:path';
 import { blobError, storageError, systemCode } from './storageError.ts';
-import type { BlobStorage, ByteRange, DerivativeKind, FreeSpace, StoredBlob, TemporaryBlob } from './storage.ts';
+import type { BlobStorage, DerivativeKind, FreeSpace, ReadableBlob, StoredBlob, TemporaryBlob } from './storage.ts';
 import { createTemporaryFile, syncFolder } from './temporaryFile.ts';
 
 const FAN_OUT_CHARACTERS = 2;
@@ -19,7 +20,7 @@ const BLOB_ID = /^[0-9a-f]{8}(?:-[0-9a-f]{4}){3}-[0-9a-f]{12}$/;
  */
 export class FileStorage implements BlobStorage {
   readonly #folder: string;
-  readonly #builds = new Map<string, Promise<string>>();
+  readonly #builds = new Map<string, Promise<void>>();
 
   constructor(folder: string) {
     this.#folder = folder;
@@ -50,14 +51,8 @@ export class FileStorage implements BlobStorage {
     }
   }
 
-  async open(blobId: string, range?: ByteRange): Promise<NodeJS.ReadableStream> {
-    try {
-      const handle = await open(this.#blobPath(blobId), 'r');
-      const stretch = range && { start: range.firstByte, end: range.lastByte };
-      return handle.createReadStream({ highWaterMark: READ_CHUNK_BYTES, ...stretch });
-    } catch (error) {
-      throw blobError(error);
-    }
+  async open(blobId: string): Promise<ReadableBlob> {
+    return readable(this.#blobPath(blobId), await this.byteCount(blobId));
   }
 
   async pathForReading(blobId: string): Promise<string> {
@@ -77,24 +72,25 @@ export class FileStorage implements BlobStorage {
   async derivative(
     blobId: string,
     kind: DerivativeKind,
-    build: (outputPath: string) => Promise<void>,
-  ): Promise<string> {
+    build: (outputPath: string) => Promise<unknown>,
+  ): Promise<ReadableBlob> {
     const path = this.#derivativePath(blobId, kind);
-    const running = this.#builds.get(path);
-    if (running) return running;
-    const started = this.#findOrBuild(path, fanOut(blobId), build).finally(() => this.#builds.delete(path));
-    this.#builds.set(path, started);
-    return started;
+    let making = this.#builds.get(path);
+    if (making === undefined) {
+      making = this.#findOrBuild(path, build).finally(() => this.#builds.delete(path));
+      this.#builds.set(path, making);
+    }
+    await making;
+    return readable(path, (await stat(path)).size);
   }
 
-  async #findOrBuild(path: string, fan: string, build: (outputPath: string) => Promise<void>): Promise<string> {
-    if (await exists(path)) return path;
+  async #findOrBuild(path: string, build: (outputPath: string) => Promise<unknown>): Promise<void> {
+    if ((await changedSeconds(path)) !== null) return;
     const temporaryPath = join(await this.#ensureFolder('tmp'), randomUUID());
     try {
-      await this.#ensureFolder('derivatives', fan);
       await build(temporaryPath);
+      await mkdir(dirname(path), { recursive: true });
       await rename(temporaryPath, path);
-      return path;
     } finally {
       await rm(temporaryPath, { force: true });
     }
@@ -175,8 +171,14 @@ function fanOut(blobId: string): string {
   return blobId.slice(0, FAN_OUT_CHARACTERS);
 }
 
-async function exists(path: string): Promise<boolean> {
-  return (await changedSeconds(path)) !== null;
+function readable(path: string, byteCount: number): ReadableBlob {
+  return {
+    byteCount,
+    read: (range) => {
+      const stretch = range && { start: range.firstByte, end: range.lastByte };
+      return createReadStream(path, { highWaterMark: READ_CHUNK_BYTES, ...stretch });
+    },
+  };
 }
 
 /** @returns null when the file is gone, because another process swept it first */

@@ -1,3 +1,5 @@
+import type { Readable } from 'node:stream';
+
 /**
  * Where the bytes of recordings live. Rows hold only a blob id; nothing outside this folder knows a path, so that
  * another kind of storage can take the place of the file system.
@@ -19,6 +21,12 @@ export interface TemporaryBlob {
 export interface ByteRange {
   readonly firstByte: number;
   readonly lastByte: number;
+}
+
+/** Bytes that can be read, whole or in part, as often as wanted. */
+export interface ReadableBlob {
+  readonly byteCount: number;
+  read(range?: ByteRange): Readable;
 }
 
 export interface StoredBlob {
@@ -47,17 +55,20 @@ export interface BlobStorage {
    */
   commit(temporary: TemporaryBlob): Promise<string>;
   byteCount(blobId: string): Promise<number>;
-  /** The bytes of a blob, or a stretch of them. The caller ends the stream. */
-  open(blobId: string, range?: ByteRange): Promise<NodeJS.ReadableStream>;
+  open(blobId: string): Promise<ReadableBlob>;
   /** For a decoder that must seek; read only. */
   pathForReading(blobId: string): Promise<string>;
   /** Removes a blob and everything made from it; nothing happens when it is gone already. */
   remove(blobId: string): Promise<void>;
   /**
-   * A path where the derivative of a blob lies; made by `build` when it is missing. Calls for the same derivative at
-   * the same time share one build.
+   * What was made from a blob, made now by `build` when it is missing. Calls for the same one at the same time share
+   * the making. Errors of `build` are thrown on.
    */
-  derivative(blobId: string, kind: DerivativeKind, build: (outputPath: string) => Promise<void>): Promise<string>;
+  derivative(
+    blobId: string,
+    kind: DerivativeKind,
+    build: (outputPath: string) => Promise<unknown>,
+  ): Promise<ReadableBlob>;
   freeSpace(): Promise<FreeSpace>;
   /** All blobs, for the sweeper. */
   list(): AsyncIterable<StoredBlob>;
