@@ -5,8 +5,9 @@ import {
   type InferCreationAttributes,
   Model,
   type ModelAttributeColumnOptions,
+  type NonAttribute,
 } from 'sequelize';
-import { EVENTS_PER_TURN_ORIGINS } from '#lib/schemas/build.ts';
+import { EVENTS_PER_TURN_ORIGINS, type Geometry } from '#lib/schemas/build.ts';
 import { database } from '../database/connection.ts';
 import { idColumn, optionalNumberColumn, optionalTextColumn, referenceColumn, timeColumn } from './columns.ts';
 
@@ -33,6 +34,11 @@ export class Build extends Model<InferAttributes<Build>, InferCreationAttributes
   declare createdBy: string;
   declare createdAt: CreationOptional<Date>;
   declare updatedAt: CreationOptional<Date>;
+
+  get geometry(): NonAttribute<Geometry> {
+    const { poles, segments, blades, teeth, magnets } = this;
+    return { poles, segments, blades, teeth, magnets };
+  }
 }
 
 Build.init(

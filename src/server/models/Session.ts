@@ -5,9 +5,11 @@ import {
   type InferCreationAttributes,
   Model,
   type NonAttribute,
+  Op,
 } from 'sequelize';
 import { SESSION_PURPOSES, type SessionPurpose } from '#lib/schemas/session.ts';
 import { database } from '../database/connection.ts';
+import { afterCursor, NEWEST_FIRST } from '../database/pageCursor.ts';
 import { Account } from './Account.ts';
 import { Build } from './Build.ts';
 import {
@@ -35,7 +37,33 @@ export class Session extends Model<InferAttributes<Session>, InferCreationAttrib
   declare updatedAt: CreationOptional<Date>;
   declare build?: NonAttribute<Build | null>;
   declare creator?: NonAttribute<Account>;
+
+  static async loadByIdInBenches(id: string, benchIds: readonly string[]): Promise<SessionWithBuildAndCreator | null> {
+    const session = await Session.findOne({ where: { id, benchId: [...benchIds] }, include: BUILD_AND_CREATOR });
+    return session as SessionWithBuildAndCreator | null;
+  }
+
+  /** Newest first, after the cursor of an earlier page. */
+  static async listByBenches(
+    benchIds: readonly string[],
+    { limit, cursor }: { limit: number; cursor: string | undefined },
+  ): Promise<SessionWithBuildAndCreator[]> {
+    const sessions = await Session.findAll({
+      where: { [Op.and]: [{ benchId: [...benchIds] }, afterCursor(cursor)] },
+      include: BUILD_AND_CREATOR,
+      order: NEWEST_FIRST,
+      limit,
+    });
+    return sessions as SessionWithBuildAndCreator[];
+  }
 }
+
+export type SessionWithBuildAndCreator = Session & { build: Build | null; creator: Account };
+
+const BUILD_AND_CREATOR = [
+  { association: 'build', attributes: ['id', 'name', 'revision'] },
+  { association: 'creator', attributes: ['id', 'name'], required: true },
+];
 
 Session.init(
   {
