@@ -20,6 +20,8 @@ interface Props {
 const HEIGHT_PX = 220;
 const MOST_PARTS = 60;
 const PER_CENT = 100;
+/** 15°, 30°, 45°, 60° and 90°. */
+const TURN_STEPS = [24, 12, 8, 6, 4].map((parts) => 1 / parts);
 const WHOLE_TURN = { from: 0, to: 1 };
 
 /** The sound of one turn, averaged over all turns, above the unrolled ring. */
@@ -82,7 +84,11 @@ function oneTurnOptions(colours: ChartColours): PlotOptions {
   return {
     ...base,
     axes: [
-      { ...horizontal, values: (_, turns) => turns.map((turn) => `${String(Math.round(turn * 360))}°`) },
+      {
+        ...horizontal,
+        incrs: TURN_STEPS,
+        values: (_, turns) => turns.map((turn) => `${String(Math.round(turn * 360))}°`),
+      },
       vertical ?? {},
     ],
     series: [{}, { stroke: colours.ink, width: 1.5, points: { show: false } }],

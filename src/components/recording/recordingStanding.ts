@@ -20,6 +20,15 @@ export interface MeasuredSpeed {
   readonly rpmHigh: number;
 }
 
+/** Whether a reading is unsure and nobody has looked at it; an unsure speed is drawn hollow. */
+export function isUnsure({ reading, review }: Pick<RecordingView, 'reading' | 'review'>): boolean {
+  return review === null && isUnsureConfidence(reading?.confidence ?? null);
+}
+
+export function isUnsureConfidence(confidence: number | null): boolean {
+  return confidence !== null && confidence < UNSURE_BELOW_CONFIDENCE;
+}
+
 const NO_ROTATION_WORDS: Record<NoRotationReason, string> = {
   silence: 'silence',
   hum: 'only mains hum',
@@ -58,11 +67,7 @@ export function standingOf(recording: RecordingView): Standing {
   if (speed === null || reading === null) return { shape: 'undecided', sentence: nothingTurningWords(reading) };
   const sentence = uncertainSentence({ value: speed.rpm, low: speed.rpmLow, high: speed.rpmHigh }, 'rpm');
   if (review !== null) return { shape: null, sentence: `${sentence}; confirmed by ${review.reviewer.name}` };
-  return isUnsure(reading) ? { shape: 'undecided', sentence: unsureWords(reading) } : { shape: null, sentence };
-}
-
-function isUnsure(reading: ReadingView): boolean {
-  return reading.confidence !== null && reading.confidence < UNSURE_BELOW_CONFIDENCE;
+  return isUnsure(recording) ? { shape: 'undecided', sentence: unsureWords(reading) } : { shape: null, sentence };
 }
 
 function nothingTurningWords(reading: ReadingView | null): string {

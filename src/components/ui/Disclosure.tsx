@@ -10,7 +10,7 @@ interface Props {
 export function Disclosure({ summary, isOpen = false, children }: Props) {
   return (
     <details open={isOpen} className="border-t border-line">
-      <summary className="flex items-center py-2 touch">{summary}</summary>
+      <summary className="flex items-center py-2 underline underline-offset-4 touch">{summary}</summary>
       <div className="pb-4">{children}</div>
     </details>
   );

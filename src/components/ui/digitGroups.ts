@@ -12,8 +12,12 @@ export function digitGroups(digits: string): string[] {
   return groups;
 }
 
+/** A unit stays on the line of its number. */
+const SPACE_BEFORE_UNIT = /(?<=\d) (?=(?:rpm|Hz|dB|V|A|s|ms|kB|MB)\b|%)/gu;
+
 /** The parts of a text in order: words as they are, long numbers as their groups. */
-export function groupedParts(text: string): (string | readonly string[])[] {
+export function groupedParts(plainText: string): (string | readonly string[])[] {
+  const text = plainText.replaceAll(SPACE_BEFORE_UNIT, '\u00a0');
   const parts: (string | readonly string[])[] = [];
   let position = 0;
   for (const match of text.matchAll(LONG_NUMBER)) {
