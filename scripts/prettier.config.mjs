@@ -1,3 +1,5 @@
+import { fileURLToPath } from 'node:url';
+
 /** @type {import('prettier').Config} */
 export default {
   singleQuote: true,
@@ -5,5 +7,6 @@ export default {
   trailingComma: 'all',
   plugins: ['prettier-plugin-astro', 'prettier-plugin-tailwindcss'],
   overrides: [{ files: '*.astro', options: { parser: 'astro' } }],
-  tailwindStylesheet: './src/styles/global.css',
+  // Absolute: the plugin takes a relative path from the folder of this file for some files and not for others.
+  tailwindStylesheet: fileURLToPath(new URL('../src/styles/global.css', import.meta.url)),
 };
