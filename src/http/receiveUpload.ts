@@ -2,7 +2,7 @@ import { Readable } from 'node:stream';
 import type { ReadableStream } from 'node:stream/web';
 import multer from 'multer';
 import { MAXIMUM_UPLOAD_BYTES } from '#lib/schemas/uploadLimits.ts';
-import { invalidFields } from '#server/errors.ts';
+import { invalidFields, type ServerError } from '#server/errors.ts';
 import { requireFreeSpace } from '#server/storage/requireFreeSpace.ts';
 import type { BlobStorage } from '#server/storage/storage.ts';
 import type { ReceivedUpload } from '#server/usecases/receivedUpload.ts';
@@ -67,6 +67,7 @@ class FormReader {
   readonly #filter: PartHeaderFilter;
   readonly #beforeFile: ReceiveUploadOptions['beforeFile'];
   #receivedBytes = 0;
+  #failure: ServerError | null = null;
 
   constructor(source: Readable, boundary: string, { storage, beforeFile }: ReceiveUploadOptions) {
     this.#source = source;
@@ -84,7 +85,7 @@ class FormReader {
     return new Promise((resolve, reject) => {
       this.#middleware()(body, null, (error) => {
         if (error === undefined) resolve(body.body ?? {});
-        else reject(this.#filter.errored ?? (error as Error));
+        else reject(this.#failure ?? (error as Error));
       });
     });
   }
@@ -118,8 +119,10 @@ class FormReader {
 
   /** Ends the parser at once; it would otherwise read the rest of the body before it says what is wrong. */
   readonly #fail = (error: unknown): void => {
+    // What follows from the first failure is not the reason.
+    this.#failure ??= uploadRefusal(error);
     this.#source.unpipe(this.#filter);
-    this.#filter.destroy(uploadRefusal(error));
+    this.#filter.destroy(this.#failure);
   };
 }
 

@@ -69,6 +69,7 @@ export class UploadEngine implements StorageEngine {
         tooLarge,
       });
     } catch (error) {
+      this.#onFailure(error);
       await temporary.discard();
       throw error;
     }

@@ -31,7 +31,8 @@ export function malformedForm(cause?: unknown): ServerError {
 export function uploadRefusal(error: unknown): ServerError {
   if (error instanceof ServerError) return error;
   if (error instanceof MulterError && error.code === 'LIMIT_FIELD_VALUE' && error.field !== undefined) {
-    return invalidFields([{ field: error.field, message: 'Is too long.' }]);
+    const message = error.field === 'file' ? 'Must be a file, sent with a file name.' : 'Is too long.';
+    return invalidFields([{ field: error.field, message }]);
   }
   return malformedForm(error);
 }
