@@ -24,7 +24,7 @@ export const securityHeaders: MiddlewareHandler = async (_context, next) => {
   headers.set('content-security-policy', isPage ? pagePolicy(headers.get('content-security-policy')) : CALL_CSP);
   headers.set('x-content-type-options', 'nosniff');
   headers.set('x-frame-options', 'DENY');
-  headers.set('referrer-policy', 'same-origin');
+  if (!headers.has('referrer-policy')) headers.set('referrer-policy', 'same-origin');
   headers.set('cross-origin-opener-policy', 'same-origin');
   headers.set('cross-origin-resource-policy', 'same-origin');
   headers.set('permissions-policy', 'camera=(self), microphone=(self), geolocation=(), payment=(), usb=()');
