@@ -24,10 +24,11 @@ const TOOTH_FRACTION_OF_SHARE = 0.5;
 const DECIMALS = 2;
 const number = (value: number) => String(Number(value.toFixed(DECIMALS)));
 
-/** The point at a radius and an angle, as `x y`. */
+/** The point at a radius and an angle, rounded: engines differ in the last digit of a sine, and server and page must not. */
 export function pointOnRing(radius: number, turnFraction: number): { x: number; y: number } {
   const angle = 2 * Math.PI * turnFraction;
-  return { x: radius * Math.sin(angle), y: -radius * Math.cos(angle) };
+  const rounded = (value: number) => Number(value.toFixed(DECIMALS));
+  return { x: rounded(radius * Math.sin(angle)), y: rounded(-radius * Math.cos(angle)) };
 }
 
 /** SVG path of one sector of a band, from one angle to a later one. */

@@ -65,7 +65,11 @@ function RecordingRow({ row, axis, isNewest }: { row: SessionRow; axis: SpeedAxi
       </span>
       <span role="cell" className="col-span-3 px-2 desk:col-span-1">
         {axis !== null && speed !== null && (
-          <SpeedDots axis={axis} dots={[{ ...speed, recordingId }]} newestId={isNewest ? recordingId : null} />
+          <SpeedDots
+            axis={axis}
+            dots={[{ ...speed, recordingId, isUnsure: row.isUnsure }]}
+            newestId={isNewest ? recordingId : null}
+          />
         )}
       </span>
       <span role="cell" className="col-span-3 text-small desk:col-span-1">

@@ -6,6 +6,7 @@ import { useSeenMark } from '#client/hooks/useSeenMark.ts';
 import { useUpdates } from '#client/hooks/useUpdates.ts';
 import { recordingsQuery } from '#client/queries/recordings.ts';
 import { sessionQuery, sessionResultQuery } from '#client/queries/sessions.ts';
+import { speedOf, type MeasuredSpeed } from '#components/recording/recordingStanding.ts';
 import { Notice } from '#components/ui/Notice.tsx';
 import type { Page } from '#lib/schemas/page.ts';
 import type { RecordingView } from '#lib/schemas/recording.ts';
@@ -16,7 +17,7 @@ import { SessionConditionsLine } from './SessionConditionsLine.tsx';
 import { SessionRecordings } from './SessionRecordings.tsx';
 import { SessionTrend } from './SessionTrend.tsx';
 import type { RowOrder } from './sessionRows.ts';
-import { speedAxis } from './speedAxis.ts';
+import { linearSpeedAxis } from './speedAxis.ts';
 import type { TrendBy } from './trendPlot.ts';
 
 interface Props {
@@ -37,6 +38,11 @@ export function SessionBoard(props: Props) {
   );
 }
 
+function speedsOf(recording: RecordingView): MeasuredSpeed[] {
+  const speed = speedOf(recording);
+  return speed === null ? [] : [speed];
+}
+
 function Board(props: Props) {
   const updates = useUpdates();
   const { data: session } = useQuery({ ...sessionQuery(props.session.id), initialData: props.session });
@@ -46,7 +52,10 @@ function Board(props: Props) {
     initialData: { pages: [props.recordings], pageParams: [null] },
   });
   const recordings = useMemo(() => list.data.pages.flatMap((page) => page.items), [list.data]);
-  const axis = useMemo(() => speedAxis(result.points), [result.points]);
+  const axis = useMemo(
+    () => linearSpeedAxis([...result.points, ...recordings.flatMap(speedsOf)]),
+    [result.points, recordings],
+  );
   const newest = result.points.at(-1)?.recordingId ?? null;
   const isNewestNew = useSeenMark(session.id, newest);
   const newestId = isNewestNew ? newest : null;

@@ -20,7 +20,7 @@ export function SessionClaim({ result }: { result: SessionResultView }) {
   const [key, figure] = main;
   const { value, low, high } = uncertainText(figure);
   return (
-    <div aria-live="polite">
+    <div aria-live="polite" className="grid gap-2">
       <p className="text-small text-muted">{figureName(key)}</p>
       <p>
         <span className="figure-mark figures text-figure leading-none">

@@ -31,13 +31,15 @@ export function SessionTrend({ points, axis, by, onBy, newestId }: Props) {
           Each measured recording becomes a dot here, with its 95 % interval. Two recordings already show a trend.
         </p>
       ) : (
-        <SessionTrendChart
-          title="Speed over the recordings"
-          points={points}
-          axis={axis}
-          by={shownBy}
-          newestId={newestId}
-        />
+        <div className="bg-sheet py-3 pr-1 pl-3">
+          <SessionTrendChart
+            title="Speed over the recordings"
+            points={points}
+            axis={axis}
+            by={shownBy}
+            newestId={newestId}
+          />
+        </div>
       )}
     </section>
   );

@@ -3,6 +3,8 @@ import { axisPercent, type SpeedAxis } from './speedAxis.ts';
 
 export interface SpeedDot extends MeasuredSpeed {
   readonly recordingId: string;
+  /** Drawn hollow: it may be half or double. */
+  readonly isUnsure: boolean;
 }
 
 interface Props {
@@ -55,8 +57,9 @@ function Dot({ axis, dot, isNewest }: { axis: SpeedAxis; dot: SpeedDot; isNewest
         cx={percent(axisPercent(axis, dot.rpm))}
         cy={MIDDLE}
         r={isNewest ? 6 : 4}
-        className="stroke-ground"
-        strokeWidth={1}
+        {...(dot.isUnsure
+          ? { className: 'fill-ground', strokeWidth: 2 }
+          : { className: 'stroke-ground', strokeWidth: 1 })}
       />
     </g>
   );

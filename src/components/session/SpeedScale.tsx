@@ -3,6 +3,8 @@ import { axisPercent, type SpeedAxis } from './speedAxis.ts';
 
 /** Labels closer than this, per cent of the axis, would run into each other on a phone. */
 const LABEL_SPACE_PERCENT = 16;
+const EDGE_PERCENT = 6;
+const PER_CENT = 100;
 
 /** The labels of a shared speed axis, rpm. */
 export function SpeedScale({ axis }: { axis: SpeedAxis }) {
@@ -13,7 +15,7 @@ export function SpeedScale({ axis }: { axis: SpeedAxis }) {
         return (
           <span
             key={rpm}
-            className="absolute -translate-x-1/2 whitespace-nowrap"
+            className={`absolute whitespace-nowrap ${shiftAt(at)}`}
             style={{ insetInlineStart: `${String(at)}%` }}
           >
             <GroupedText text={String(rpm)} />
@@ -22,6 +24,12 @@ export function SpeedScale({ axis }: { axis: SpeedAxis }) {
       })}
     </div>
   );
+}
+
+/** Centred under its tick; at the ends pulled in, so that nothing stands out of the axis. */
+function shiftAt(percent: number): string {
+  if (percent < EDGE_PERCENT) return '';
+  return percent > PER_CENT - EDGE_PERCENT ? '-translate-x-full' : '-translate-x-1/2';
 }
 
 /** The ticks that have room for their label, from the left. */

@@ -1,5 +1,13 @@
-import { speedOf, standingOf, type MeasuredSpeed, type Standing } from '#components/recording/recordingStanding.ts';
+import {
+  isUnsure,
+  speedOf,
+  standingOf,
+  type MeasuredSpeed,
+  type Standing,
+} from '#components/recording/recordingStanding.ts';
+import { confidenceWords } from '#components/recording/readingWords.ts';
 import { plainNumberText } from '#lib/format/numberText.ts';
+import { uncertainText } from '#lib/format/uncertainText.ts';
 import type { RecordingView } from '#lib/schemas/recording.ts';
 
 /** One recording as one row of its session's table. */
@@ -13,6 +21,7 @@ export interface SessionRow {
   /** Build and conditions in a few words. */
   readonly circumstances: string;
   readonly speed: MeasuredSpeed | null;
+  readonly isUnsure: boolean;
   readonly standing: Standing;
   readonly needsPerson: boolean;
 }
@@ -30,7 +39,8 @@ export function sessionRows(recordings: readonly RecordingView[], recordingCount
     supplyVolts: recording.supplyVolts,
     circumstances: circumstancesOf(recording),
     speed: speedOf(recording),
-    standing: standingOf(recording),
+    isUnsure: isUnsure(recording),
+    standing: standingBesideSpeed(recording),
     needsPerson: recording.needsPerson,
   }));
 }
@@ -44,6 +54,18 @@ export function orderedRows(rows: readonly SessionRow[], order: RowOrder): Sessi
   }[order];
   // Two endless keys differ by NaN, which counts as equal here.
   return rows.toSorted((a, b) => keyOf(a) - keyOf(b) || b.order - a.order);
+}
+
+/** The speed has a column of its own, so the standing says how far to trust it. */
+function standingBesideSpeed(recording: RecordingView): Standing {
+  const standing = standingOf(recording);
+  const speed = speedOf(recording);
+  if (standing.shape !== null || speed === null) return standing;
+  const { low, high } = uncertainText({ value: speed.rpm, low: speed.rpmLow, high: speed.rpmHigh });
+  const trust = recording.review
+    ? `looked at by ${recording.review.reviewer.name}`
+    : confidenceWords(recording.reading?.confidence ?? 0).toLowerCase();
+  return { shape: null, sentence: `Between ${low} and ${high}; ${trust}` };
 }
 
 function circumstancesOf({ build, supplyVolts, currentAmps, note }: RecordingView): string {

@@ -15,14 +15,27 @@ const TICK_TARGET_COUNT = 4;
 const ROUND_STEPS = [1, 2, 5, 10] as const;
 const PER_CENT = 100;
 
-/** An axis with round ends that holds all intervals; null without speeds. */
+/** An axis for speeds of different motors, with round ends that hold all intervals; null without speeds. */
 export function speedAxis(speeds: readonly MeasuredSpeed[]): SpeedAxis | null {
   if (speeds.length === 0) return null;
-  const lowest = Math.min(...speeds.map(({ rpmLow }) => rpmLow));
-  const highest = Math.max(...speeds.map(({ rpmHigh }) => rpmHigh));
+  const { lowest, highest } = extentOf(speeds);
   return lowest > 0 && highest / lowest > LINEAR_MAXIMUM_RATIO
     ? logarithmicAxis(lowest, highest)
     : linearAxis(lowest, highest);
+}
+
+/** An axis for speeds of one motor, on which a speed–voltage line stays a line; null without speeds. */
+export function linearSpeedAxis(speeds: readonly MeasuredSpeed[]): SpeedAxis | null {
+  if (speeds.length === 0) return null;
+  const { lowest, highest } = extentOf(speeds);
+  return linearAxis(lowest, highest);
+}
+
+function extentOf(speeds: readonly MeasuredSpeed[]): { lowest: number; highest: number } {
+  return {
+    lowest: Math.min(...speeds.map(({ rpmLow }) => rpmLow)),
+    highest: Math.max(...speeds.map(({ rpmHigh }) => rpmHigh)),
+  };
 }
 
 /** Where a speed stands on the axis, per cent from its start, kept inside it. */

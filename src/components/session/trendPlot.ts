@@ -3,6 +3,7 @@ import type { ChartColours } from '#components/charts/chartColours.ts';
 import type { PlotOptions } from '#components/charts/createPlot.ts';
 import { basePlotOptions } from '#components/charts/plotStyle.ts';
 import type { SessionResultView } from '#lib/schemas/session.ts';
+import { isUnsureConfidence } from '#components/recording/recordingStanding.ts';
 import type { SpeedAxis } from './speedAxis.ts';
 
 export type TrendPoint = SessionResultView['points'][number];
@@ -59,9 +60,7 @@ export function trendPlotOptions(
         { ...xAxis, ...(by === 'order' && { incrs: WHOLE_STEPS }) },
         { ...yAxis, splits: () => [...axis.ticksRpm] },
       ],
-      scales: {
-        y: { range: [axis.minimumRpm, axis.maximumRpm], distr: axis.isLogarithmic ? 3 : 1 },
-      },
+      scales: { y: { range: [axis.minimumRpm, axis.maximumRpm] } },
       series: [{}, { stroke: colours.muted, width: 1, points: { show: false } }],
       hooks: {
         draw: [
@@ -107,6 +106,8 @@ function drawPoint(plot: uPlot, { point, place, colours, isNewest }: DrawnPoint)
   ctx.stroke();
   ctx.beginPath();
   ctx.arc(x, y, (isNewest ? NEWEST_RADIUS_PX : DOT_RADIUS_PX) * scale, 0, 2 * Math.PI);
+  if (isUnsureConfidence(point.confidence) && !point.reviewed) ctx.fillStyle = colours.sheet;
   ctx.fill();
+  ctx.stroke();
   ctx.restore();
 }

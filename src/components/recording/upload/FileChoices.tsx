@@ -16,14 +16,14 @@ export function FileChoices({ onFiles, isDropOver }: Props) {
         accept="audio/*"
         isRecorder
         weight="main"
-        className="hidden min-h-14 grow pointer-coarse:inline-flex"
+        className="min-h-14 grow not-pointer-coarse:hidden"
         onFiles={onFiles}
       />
       <FileChoice
         label="Record video"
         accept="video/*"
         isRecorder
-        className="hidden min-h-14 grow pointer-coarse:inline-flex"
+        className="min-h-14 grow not-pointer-coarse:hidden"
         onFiles={onFiles}
       />
       <FileChoice

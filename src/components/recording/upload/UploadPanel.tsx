@@ -87,7 +87,7 @@ function Panel({ benchId, builds, sessions, conditions: likely, purpose = null }
           </Button>
         </Notice>
       )}
-      {updates === 'lost' && (
+      {updates === 'lost' && uploads.length > 0 && (
         <Notice shape="undecided" title="No connection for live updates">
           Files that were received are safe. This page asks again every few seconds.
         </Notice>
