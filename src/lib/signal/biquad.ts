@@ -61,18 +61,34 @@ export function filterInPlace<Samples extends Float32Array | Float64Array>(
   samples: Samples,
   sections: readonly Biquad[],
 ): Samples {
-  for (const { b0, b1, b2, a1, a2 } of sections) {
-    let delay1 = 0;
-    let delay2 = 0;
-    for (let sample = 0; sample < samples.length; sample++) {
-      const input = samples[sample] as number;
-      const output = b0 * input + delay1;
-      delay1 = b1 * input - a1 * output + delay2;
-      delay2 = b2 * input - a2 * output;
-      samples[sample] = output;
-    }
-  }
+  createFilter(sections)(samples);
   return samples;
+}
+
+/**
+ * A filter that keeps its state from one call to the next, for signals that come in pieces.
+ *
+ * @returns a function that filters a piece in place
+ */
+export function createFilter(
+  sections: readonly Biquad[],
+): (piece: Float32Array | Float64Array) => void {
+  const delays = new Float64Array(2 * sections.length);
+  return (piece) => {
+    for (const [index, { b0, b1, b2, a1, a2 }] of sections.entries()) {
+      let delay1 = delays[2 * index] as number;
+      let delay2 = delays[2 * index + 1] as number;
+      for (let sample = 0; sample < piece.length; sample++) {
+        const input = piece[sample] as number;
+        const output = b0 * input + delay1;
+        delay1 = b1 * input - a1 * output + delay2;
+        delay2 = b2 * input - a2 * output;
+        piece[sample] = output;
+      }
+      delays[2 * index] = delay1;
+      delays[2 * index + 1] = delay2;
+    }
+  };
 }
 
 function angleOf({ frequencyHz, sampleRateHz, quality }: SectionDesign): {

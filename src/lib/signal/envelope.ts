@@ -1,21 +1,51 @@
-/** Length of the running mean that an envelope is divided by. */
-const NORMALISATION_SECONDS = 1;
+import { createFilter } from "./biquad.ts";
+import type { Biquad } from "./biquad.ts";
+
+/** Samples that are filtered at a time. */
+const CHUNK_SAMPLES = 16_384;
+/** Length of the running mean that a fast envelope is divided by. */
+export const FAST_NORMALISATION_SECONDS = 1;
+/** The same for an envelope that shows events of a second and more. */
+export const SLOW_NORMALISATION_SECONDS = 3;
 /** Part of the overall mean added to the running one, so that silence between sounds is not blown up. */
 const MEAN_FLOOR_FRACTION = 0.02;
 /** Louder than this many times its surroundings, a knock counts no more. */
 const LOUDEST_RATIO = 6;
 
-/** Mean of |samples| over blocks of `factor`; shape [floor(sampleCount / factor)]. */
-export function rectifiedDecimation(
+/**
+ * Mean of |filtered samples| over blocks of `factor`. The filtered signal is never held as a whole: at ten minutes
+ * it would be larger than everything that comes out.
+ *
+ * @param samples shape [sampleCount]; not written
+ * @param sections filter, run from rest
+ * @returns shape [floor(sampleCount / factor)]
+ */
+export function filteredEnvelope(
   samples: Float32Array,
+  sections: readonly Biquad[],
   factor: number,
 ): Float32Array {
   const output = new Float32Array(Math.floor(samples.length / factor));
-  for (let block = 0, sample = 0; block < output.length; block++) {
-    let sum = 0;
-    for (let inside = 0; inside < factor; inside++)
-      sum += Math.abs(samples[sample++] as number);
-    output[block] = sum / factor;
+  const filter = createFilter(sections);
+  const blocksPerChunk = Math.ceil(CHUNK_SAMPLES / factor);
+  const chunk = new Float32Array(blocksPerChunk * factor);
+  for (
+    let firstBlock = 0;
+    firstBlock < output.length;
+    firstBlock += blocksPerChunk
+  ) {
+    const blocks = Math.min(blocksPerChunk, output.length - firstBlock);
+    const piece = chunk.subarray(0, blocks * factor);
+    piece.set(
+      samples.subarray(firstBlock * factor, (firstBlock + blocks) * factor),
+    );
+    filter(piece);
+    for (let block = 0, sample = 0; block < blocks; block++) {
+      let sum = 0;
+      for (let inside = 0; inside < factor; inside++)
+        sum += Math.abs(piece[sample++] as number);
+      output[firstBlock + block] = sum / factor;
+    }
   }
   return output;
 }
@@ -25,15 +55,17 @@ export function rectifiedDecimation(
  * automatic gain and single knocks then weigh alike.
  *
  * @param envelope shape [sampleCount], ≥ 0; overwritten
+ * @param meanSeconds length of the running mean, longer than two events
  * @returns the same array; mean near 0, range [−1, 5]; all −1 … 0 where the input is silent
  */
 export function normalisedEnvelope(
   envelope: Float32Array,
   sampleRateHz: number,
+  meanSeconds: number,
 ): Float32Array {
   const running = runningMean(
     envelope,
-    Math.max(1, Math.round((NORMALISATION_SECONDS * sampleRateHz) / 2)),
+    Math.max(1, Math.round((meanSeconds * sampleRateHz) / 2)),
   );
   let total = 0;
   for (const value of envelope) total += value;

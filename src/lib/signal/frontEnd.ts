@@ -5,7 +5,11 @@ import {
   lowPassBiquad,
 } from "./biquad.ts";
 import type { Biquad } from "./biquad.ts";
-import { normalisedEnvelope, rectifiedDecimation } from "./envelope.ts";
+import {
+  FAST_NORMALISATION_SECONDS,
+  filteredEnvelope,
+  normalisedEnvelope,
+} from "./envelope.ts";
 import {
   LONG_HALF_BAND_PAIRS,
   SHORT_HALF_BAND_PAIRS,
@@ -146,12 +150,13 @@ function envelopeOf(
   factor: number,
 ): SampledSignal {
   const envelopeRateHz = sampleRateHz / factor;
-  const rectified = rectifiedDecimation(
-    filterInPlace(samples.slice(), sections),
-    factor,
-  );
+  const envelope = filteredEnvelope(samples, sections, factor);
   return {
-    samples: normalisedEnvelope(rectified, envelopeRateHz),
+    samples: normalisedEnvelope(
+      envelope,
+      envelopeRateHz,
+      FAST_NORMALISATION_SECONDS,
+    ),
     sampleRateHz: envelopeRateHz,
   };
 }
