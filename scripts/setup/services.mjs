@@ -92,6 +92,8 @@ async function startMariadb({ serverFolder, dataFolder, databasePort, secrets })
       `CREATE USER IF NOT EXISTS 'ripplebench'@'127.0.0.1' IDENTIFIED BY '${secrets.databasePassword}';`,
       `ALTER USER 'ripplebench'@'127.0.0.1' IDENTIFIED BY '${secrets.databasePassword}';`,
       "GRANT ALL ON ripplebench.* TO 'ripplebench'@'127.0.0.1';",
+      // Tests of the worker make databases of their own, so that no other worker takes their recordings.
+      "GRANT ALL ON `ripplebench\\_lab\\_%`.* TO 'ripplebench'@'127.0.0.1';",
       '',
     ].join('\n'),
     { mode: 0o640 },
