@@ -1,7 +1,7 @@
 import { open, type FileHandle } from 'node:fs/promises';
 import wavDecoder from 'wav-decoder';
 import { readAt } from './readAt.ts';
-import type { WavDescription } from './readWavHeader.ts';
+import type { SoundExtent, WavDescription } from './readWavHeader.ts';
 import type { SampleCollector } from './sampleCollector.ts';
 
 const PLAIN_CODECS: ReadonlySet<string> = new Set(['pcm_u8', 'pcm_s16le', 'pcm_s24le', 'pcm_f32le']);
@@ -11,7 +11,7 @@ const HEADER_BYTES = 44;
 
 /** Whether wav-decoder reads this file rightly; it stumbles over everything but the oldest form of the header. */
 export function isPlainWav(wav: WavDescription): boolean {
-  return wav.form === 'RIFF' && !wav.format.isExtensible && !wav.isSplit && PLAIN_CODECS.has(wav.format.codec);
+  return wav.form === 'RIFF' && !wav.format.isExtensible && PLAIN_CODECS.has(wav.format.codec);
 }
 
 /**
@@ -29,27 +29,23 @@ export async function decodePlainWav(
 ): Promise<void> {
   const file = await open(path, 'r');
   try {
-    await decodePieces(file, wav, collector, signal);
+    for (const extent of wav.extents) {
+      for await (const sound of soundPieces(file, extent, wav.format.blockAlignBytes)) {
+        signal?.throwIfAborted();
+        collector.addPlanar(decodePiece(wav, sound));
+      }
+    }
   } finally {
     await file.close();
   }
 }
 
-async function decodePieces(
-  file: FileHandle,
-  wav: WavDescription,
-  collector: SampleCollector,
-  signal: AbortSignal | undefined,
-): Promise<void> {
-  const { blockAlignBytes } = wav.format;
-  const endBytes = Math.floor(wav.audioBytes / blockAlignBytes) * blockAlignBytes;
-  const pieceBytes = FRAMES_PER_PIECE * blockAlignBytes;
-  for (let doneBytes = 0; doneBytes < endBytes; doneBytes += pieceBytes) {
-    signal?.throwIfAborted();
-    const wantedBytes = Math.min(pieceBytes, endBytes - doneBytes);
-    const sound = await readAt(file, wantedBytes, wav.dataOffsetBytes + doneBytes);
-    collector.addPlanar(decodePiece(wav, sound));
-    if (sound.length < wantedBytes) return;
+/** Reads a stretch of sound in pieces of whole frames. */
+async function* soundPieces(file: FileHandle, extent: SoundExtent, frameBytes: number): AsyncGenerator<Buffer> {
+  const pieceBytes = FRAMES_PER_PIECE * frameBytes;
+  const wholeBytes = extent.bytes - (extent.bytes % frameBytes);
+  for (let doneBytes = 0; doneBytes < wholeBytes; doneBytes += pieceBytes) {
+    yield await readAt(file, Math.min(pieceBytes, wholeBytes - doneBytes), extent.offsetBytes + doneBytes);
   }
 }
 

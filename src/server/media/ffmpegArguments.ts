@@ -42,12 +42,15 @@ export const COMMON_ARGUMENTS = [
 /** Opens the chosen sound track of the input and nothing else of it, as far as the longest allowed duration. */
 export function soundInputArguments(probe: WavProbe | StreamProbe, input: string): string[] {
   const isSizeWrong = probe.kind === 'wav' && probe.wav.isSizeWrong;
+  // ffmpeg 5.1 reads the header of RIFX rightly and then takes its samples for little-endian ones.
+  const isBigEndian = probe.kind === 'wav' && probe.wav.form === 'RIFX';
   const streamIndex = probe.kind === 'wav' ? 0 : probe.audioStreamIndex;
   return [
     ...['-nostdin', '-threads', '1', ...COMMON_ARGUMENTS],
     ...['-codec_whitelist', DECODER_WHITELIST],
     ...['-t', String(MAXIMUM_DURATION_SECONDS + READ_BEYOND_LIMIT_SECONDS)],
     ...(isSizeWrong ? ['-ignore_length', '1'] : []),
+    ...(isBigEndian ? ['-c:a', probe.codec] : []),
     ...['-i', input, '-map', `0:${streamIndex}`, '-vn', '-sn', '-dn'],
     ...['-map_metadata', '-1', '-map_chapters', '-1', '-bitexact'],
   ];

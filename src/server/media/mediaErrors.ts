@@ -70,7 +70,7 @@ export const CANNOT_DECODE_MESSAGE =
 
 /** "Too short: 0.2 s; at least 0.5 s needed. …" */
 export function tooShortMessage(durationSeconds: number): string {
-  const seconds = durationSeconds.toFixed(1);
+  const seconds = (Math.floor(durationSeconds * 10) / 10).toFixed(1);
   return `Too short: ${seconds} s; at least ${MINIMUM_DURATION_SECONDS} s needed. Record for longer and upload again.`;
 }
 

@@ -24,7 +24,6 @@ export interface ProbeOptions {
 
 /** An upload waits for this answer, so it is short. */
 const PROBE_WALL_SECONDS = 2;
-const SHORTEST_RUN_SECONDS = 0.1;
 const probeGate = createGate(availableParallelism());
 
 /**
@@ -94,7 +93,7 @@ async function probeStreams(
   const scope = (): ProbeScope => ({
     path,
     container,
-    wallSeconds: Math.max(SHORTEST_RUN_SECONDS, deadlineSeconds - clock.monotonicSeconds()),
+    wallSeconds: Math.max(0, deadlineSeconds - clock.monotonicSeconds()),
     signal,
   });
   const report = await readStreams(scope()).catch(refuseTimedOut);

@@ -8,22 +8,25 @@ import { parseWavFormat, type WavFormat } from './parseWavFormat.ts';
 import { readAt } from './readAt.ts';
 import { walkWavChunks, type WavChunk } from './walkWavChunks.ts';
 
+/** A stretch of the file that holds sound. */
+export interface SoundExtent {
+  readonly offsetBytes: number;
+  readonly bytes: number;
+}
+
 /** A WAV file whose header makes sense. */
 export interface WavDescription {
   /** RIFX is big-endian; RF64 and BW64 carry 64-bit sizes. */
   readonly form: 'RIFF' | 'RIFX' | 'RF64' | 'BW64';
   readonly format: WavFormat;
-  readonly dataOffsetBytes: number;
-  /** Bytes of sound that the header claims. */
+  /** Where the sound is; more than one stretch in the rare file with several data chunks. */
+  readonly extents: readonly SoundExtent[];
+  /** Bytes of sound that the header claims for the first stretch. */
   readonly declaredDataBytes: number;
-  /** Bytes of sound that are there. */
-  readonly audioBytes: number;
-  /** `audioBytes` in seconds. */
+  /** Length of the sound that is there, seconds. */
   readonly durationSeconds: number;
   /** Whether claimed and real bytes differ: the real ones are used. */
   readonly isSizeWrong: boolean;
-  /** Whether the sound goes on in a second data chunk. */
-  readonly isSplit: boolean;
 }
 
 const RIFF_HEADER_BYTES = 12;
@@ -54,14 +57,9 @@ export async function readWavHeader(file: FileHandle, fileBytes: number): Promis
   const formatChunk = chunks.find((chunk) => chunk.id === 'fmt ');
   const formatBytes = Math.min(formatChunk?.declaredBytes ?? 0, FORMAT_BYTES_READ);
   const format = parseWavFormat(await readAt(file, formatBytes, formatChunk?.bodyOffsetBytes ?? 0), isLittleEndian);
-  const extent = await measureSound(file, { ...scope, data, declaredDataBytes: await dataSize(file, data, chunks) });
-  return {
-    form,
-    format,
-    dataOffsetBytes: data.bodyOffsetBytes,
-    ...extent,
-    durationSeconds: durationOf(format, extent.audioBytes),
-  };
+  const declaredDataBytes = await dataSize(file, data, chunks);
+  const sound = await findSound(file, { ...scope, data, declaredDataBytes });
+  return { form, format, declaredDataBytes, ...sound, durationSeconds: durationOf(format, sound.extents) };
 }
 
 /** The size of the data chunk, from `ds64` where the 32-bit field defers to it (EBU Tech 3306). */
@@ -78,37 +76,38 @@ interface SoundScope {
   readonly data: WavChunk;
   readonly declaredDataBytes: number;
 }
-type SoundExtent = Pick<WavDescription, 'declaredDataBytes' | 'audioBytes' | 'isSizeWrong' | 'isSplit'>;
+type FoundSound = Pick<WavDescription, 'extents' | 'isSizeWrong'>;
 
 /**
- * How many bytes are sound. The claim stands when the file ends there or goes on with proper chunks.
+ * Which bytes are sound. The claim stands when the file ends there or goes on with proper chunks.
  * A claim beyond the end is cut to what is there. Where unknown bytes follow, they are sound when
  * they outweigh the claim (a header that was never completed); otherwise they are a foreign tail.
  */
-async function measureSound(file: FileHandle, scope: SoundScope): Promise<SoundExtent> {
+async function findSound(file: FileHandle, scope: SoundScope): Promise<FoundSound> {
   const { fileBytes, isLittleEndian, data, declaredDataBytes } = scope;
   const availableBytes = fileBytes - data.bodyOffsetBytes;
-  const claim = { declaredDataBytes, isSplit: false };
-  if (declaredDataBytes > availableBytes) return { ...claim, audioBytes: availableBytes, isSizeWrong: true };
+  const claimed = { offsetBytes: data.bodyOffsetBytes, bytes: declaredDataBytes };
+  const available = { offsetBytes: data.bodyOffsetBytes, bytes: availableBytes };
+  if (declaredDataBytes > availableBytes) return { extents: [available], isSizeWrong: true };
 
   const dataEndBytes = data.bodyOffsetBytes + declaredDataBytes + (declaredDataBytes % 2);
   const tail = await walkWavChunks(file, { fileBytes, isLittleEndian, fromOffsetBytes: dataEndBytes });
   if (tail.isComplete) {
-    const furtherBytes = tail.chunks
+    const further = tail.chunks
       .filter((chunk) => chunk.id === 'data')
-      .reduce((sum, chunk) => sum + chunk.declaredBytes, 0);
-    return {
-      ...claim,
-      audioBytes: declaredDataBytes + furtherBytes,
-      isSizeWrong: false,
-      isSplit: furtherBytes > 0,
-    };
+      .map((chunk) => ({ offsetBytes: chunk.bodyOffsetBytes, bytes: chunk.declaredBytes }));
+    return { extents: [claimed, ...further], isSizeWrong: false };
   }
   const isTailSound = availableBytes - declaredDataBytes > declaredDataBytes;
-  return { ...claim, audioBytes: isTailSound ? availableBytes : declaredDataBytes, isSizeWrong: isTailSound };
+  return { extents: [isTailSound ? available : claimed], isSizeWrong: isTailSound };
 }
 
-function durationOf(format: WavFormat, audioBytes: number): number {
-  if (format.framesPerBlock === null) return audioBytes / format.byteRate;
-  return (Math.floor(audioBytes / format.blockAlignBytes) * format.framesPerBlock) / format.sampleRateHz;
+function durationOf(format: WavFormat, extents: readonly SoundExtent[]): number {
+  if (format.framesPerBlock === null) return sumOf(extents, ({ bytes }) => bytes) / format.byteRate;
+  const blockCount = sumOf(extents, ({ bytes }) => Math.floor(bytes / format.blockAlignBytes));
+  return (blockCount * format.framesPerBlock) / format.sampleRateHz;
+}
+
+function sumOf<Item>(items: readonly Item[], amount: (item: Item) => number): number {
+  return items.reduce((sum, item) => sum + amount(item), 0);
 }

@@ -36,7 +36,8 @@ const GROWTH_FACTOR = 1.5;
 
 /**
  * Gathers decoded frames, keeping the first channels up to the longest allowed duration. Memory stays below
- * 2.5 times the samples kept: one growing copy of one channel at a time.
+ * 1.7 times the most that may be kept: where the guess of the length was wrong, one channel at a time is
+ * copied to a buffer one and a half times as long.
  */
 export class SampleCollector {
   readonly #options: CollectorOptions;
