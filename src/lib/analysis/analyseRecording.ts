@@ -1,135 +1,170 @@
-import { createFrontEnd } from "#lib/signal/frontEnd.ts";
-import { eventHertzFromRpm } from "#lib/units/rotation.ts";
-import { fractionFromPpm } from "#lib/units/ratios.ts";
-import { chooseChannel } from "./chooseChannel.ts";
-import { ENGINE_VERSION } from "./engineVersion.ts";
-import {
-  envelopeSpectrumSeries,
-  spectrumSeries,
-} from "./evidence/spectrumSeries.ts";
-import { waveformSeries } from "./evidence/waveformSeries.ts";
-import { SILENCE_RMS } from "./inputChecks.ts";
-import { scoreSpeeds } from "./provisionalSpeed.ts";
-import type { NoRotationReason, Reading, ReadingWarning } from "./reading.ts";
-import type { Series } from "./series.ts";
-import type { AnalysisSettings } from "./settings.ts";
+import { rpmFromEventHertz } from '#lib/units/rotation.ts';
+import { fractionFromPpm } from '#lib/units/ratios.ts';
+import { candidateReason } from './candidateReason.ts';
+import { chooseChannel } from './chooseChannel.ts';
+import type { ChosenSignal } from './chooseChannel.ts';
+import { confidenceOf } from './confidence.ts';
+import { ENGINE_VERSION } from './engineVersion.ts';
+import { rotationSeries, soundSeries } from './evidence/recordingSeries.ts';
+import { waveformSeries } from './evidence/waveformSeries.ts';
+import { findShaft } from './findShaft.ts';
+import type { ShaftSearch } from './findShaft.ts';
+import { SILENCE_RMS } from './inputChecks.ts';
+import { motionOf } from './motion.ts';
+import type { Candidate, MeasuredReading, NoRotationReason, Reading, ReadingWarning } from './reading.ts';
+import { rotationVerdict } from './rotationVerdict.ts';
+import type { Series } from './series.ts';
+import type { AnalysisSettings } from './settings.ts';
+import { speedFigure } from './speedFigure.ts';
 
+/** A decoded recording and what is known about it. */
 export interface AnalysisInput {
-  /** One array per channel, all of shape [sampleCount], full scale ±1. */
+  /** One array per channel, all of shape [sampleCount], full scale ±1; not written. */
   readonly channels: readonly Float32Array[];
+  /** [8000, 192000] */
   readonly sampleRateHz: number;
   readonly settings: AnalysisSettings;
   /** What was found while decoding; repeated in the reading. */
   readonly warnings?: readonly ReadingWarning[];
 }
 
+/** The reading of a recording and the series that show why. */
 export interface Analysis {
   readonly reading: Reading;
   readonly series: readonly Series[];
 }
 
+/** Below this nothing can be said about a speed. */
 const SHORTEST_SECONDS = 0.3;
+/** Part of clipped samples above which clipping, not the lack of a motor, may be why nothing was found. */
+const BADLY_CLIPPED_FRACTION = 0.2;
+const MOST_CANDIDATES = 8;
 
+/**
+ * Measures how fast a shaft turned in a recording.
+ *
+ * Either a speed is found (`measured`, with its interval and the confidence that it is the right one of the
+ * candidates) or the reason why not (`no-rotation`). Times count from the start of the recording, also when only a
+ * stretch of it is analysed.
+ *
+ * @param input see `AnalysisInput`; the channels must be equally long
+ * @returns the reading and at most 8192 rows per series
+ * @throws {AnalysisRefused} when samples are not finite or lie beyond ±8
+ * @throws {RangeError} when there is no channel or a setting is out of its range
+ */
 export function analyseRecording(input: AnalysisInput): Analysis {
+  checkInput(input);
   const { settings, sampleRateHz } = input;
-  const durationSeconds = (input.channels[0]?.length ?? 0) / sampleRateHz;
-  const base = {
-    engineVersion: ENGINE_VERSION,
-    eventsPerTurn: settings.eventsPerTurn,
-    durationSeconds,
-    sampleRateHz,
-  };
-  const noRotation = (
-    reason: NoRotationReason,
-    warnings: readonly ReadingWarning[],
-    series: readonly Series[],
-  ): Analysis => ({
-    reading: {
-      ...base,
-      status: "no-rotation",
-      motion: "none",
-      reason,
-      candidates: [],
-      warnings,
-    },
-    series,
-  });
-  const start = Math.round((settings.fromSeconds ?? 0) * sampleRateHz);
-  const end =
-    settings.toSeconds === null
-      ? undefined
-      : Math.round(settings.toSeconds * sampleRateHz);
-  const channels = input.channels.map((channel) =>
-    channel.subarray(start, end),
-  );
-  if ((channels[0]?.length ?? 0) < SHORTEST_SECONDS * sampleRateHz)
-    return noRotation("too-short", input.warnings ?? [], []);
+  const firstSample = Math.round((settings.fromSeconds ?? 0) * sampleRateHz);
+  const endSample = settings.toSeconds === null ? undefined : Math.round(settings.toSeconds * sampleRateHz);
+  const channels = input.channels.map((channel) => channel.subarray(firstSample, endSample));
+  if ((channels[0]?.length ?? 0) < SHORTEST_SECONDS * sampleRateHz) return noRotation(input, 'too-short', [], []);
   const signal = chooseChannel(channels, settings.channel);
-  const warnings = [
-    ...new Set([...(input.warnings ?? []), ...signal.warnings]),
-  ];
-  const waveform = waveformSeries(signal.samples, sampleRateHz);
-  if (signal.rms < SILENCE_RMS)
-    return noRotation("silence", warnings, [waveform]);
-  const clock = 1 - fractionFromPpm(settings.clockCorrectionPpm ?? 0);
-  const frontEnd = createFrontEnd(signal.samples, sampleRateHz);
-  const series = [
-    waveform,
-    spectrumSeries(frontEnd.waveform),
-    envelopeSpectrumSeries(frontEnd.envelopes),
-  ];
-  const scored = scoreSpeeds(frontEnd, settings);
-  const best = scored[0];
-  if (!best || best.score < 2.5)
-    return noRotation("nothing-periodic", warnings, series);
-  const shaftSpeedRpm = best.shaftSpeedRpm * clock;
-  const points = Math.max(1, Math.floor(durationSeconds * 10));
-  const column = (value: (point: number) => number) =>
-    Float32Array.from({ length: points }, (_, point) => value(point));
-  const trend: Series = {
-    name: "trend",
-    columns: [
-      {
-        name: "timeSeconds",
-        unit: "s",
-        values: column((point) => (point + 0.5) / 10),
-      },
-      {
-        name: "shaftSpeedRpm",
-        unit: "rpm",
-        values: column(() => shaftSpeedRpm),
-      },
-      {
-        name: "lowRpm",
-        unit: "rpm",
-        values: column(() => shaftSpeedRpm * 0.998),
-      },
-      {
-        name: "highRpm",
-        unit: "rpm",
-        values: column(() => shaftSpeedRpm * 1.002),
-      },
-    ],
-  };
-  return {
-    reading: {
-      ...base,
-      status: "measured",
-      motion: "steady",
-      speed: {
-        shaftSpeedRpm,
-        lowRpm: shaftSpeedRpm * 0.998,
-        highRpm: shaftSpeedRpm * 1.002,
-      },
-      confidence: Math.min(0.95, best.score / 10),
-      eventHz: eventHertzFromRpm(shaftSpeedRpm, settings.eventsPerTurn),
-      candidates: scored.map((entry) => ({
-        shaftSpeedRpm: entry.shaftSpeedRpm * clock,
-        score: Math.max(0, Math.min(1, entry.score / best.score)),
-        reason: "Its events stand out of the spectrum.",
-      })),
-      warnings,
+  const warnings = [...new Set([...(input.warnings ?? []), ...signal.warnings])];
+  const startSeconds = firstSample / sampleRateHz;
+  const waveform = waveformSeries(signal.samples, sampleRateHz, startSeconds);
+  if (signal.rms < SILENCE_RMS) return noRotation(input, stillnessOf(signal), warnings, [waveform]);
+  const search = findShaft({ samples: signal.samples, sampleRateHz }, settings);
+  const series = [waveform, ...soundSeries(search, { samples: signal.samples, sampleRateHz }, startSeconds)];
+  const seconds = signal.samples.length / sampleRateHz;
+  const { reason } = rotationVerdict(search, seconds, signal.clippedFraction > BADLY_CLIPPED_FRACTION);
+  if (reason !== null) {
+    return noRotation(input, reason, warnings, series, candidatesOf(search, clockFactorOf(settings)));
+  }
+  return measured(input, search, warnings, series, startSeconds);
+}
+
+function measured(
+  input: AnalysisInput,
+  search: ShaftSearch,
+  warnings: readonly ReadingWarning[],
+  series: readonly Series[],
+  startSeconds: number,
+): Analysis {
+  const { settings } = input;
+  const [best] = search.ranked;
+  if (!best) throw new Error('measured: needs at least one hypothesis');
+  const figure = speedFigure(best.family.refined, settings.clockCorrectionPpm !== null);
+  const clockFactor = clockFactorOf(settings);
+  const eventHz = figure.eventHz * best.ratio * clockFactor;
+  const shaftSpeedRpm = rpmFromEventHertz(eventHz, settings.eventsPerTurn);
+  const reading: MeasuredReading = {
+    ...baseOf(input, warnings),
+    status: 'measured',
+    motion: motionOf(best.family.refined.track),
+    speed: {
+      shaftSpeedRpm,
+      lowRpm: shaftSpeedRpm * (1 - figure.relativeBelow),
+      highRpm: shaftSpeedRpm * (1 + figure.relativeAbove),
     },
-    series: [...series, trend],
+    confidence: confidenceOf(best),
+    eventHz,
+    candidates: candidatesOf(search, clockFactor).map((candidate, index) =>
+      // The first candidate is the reading itself, to the last digit.
+      index === 0 ? { ...candidate, shaftSpeedRpm } : candidate,
+    ),
   };
+  const uncertainty = Math.max(figure.relativeBelow, figure.relativeAbove);
+  const evidence = rotationSeries(search.frontEnd, best, { settings, clockFactor, uncertainty, startSeconds });
+  return { reading, series: [...series, ...evidence] };
+}
+
+function noRotation(
+  input: AnalysisInput,
+  reason: NoRotationReason,
+  warnings: readonly ReadingWarning[],
+  series: readonly Series[],
+  candidates: readonly Candidate[] = [],
+): Analysis {
+  return {
+    reading: { ...baseOf(input, warnings), status: 'no-rotation', motion: 'none', reason, candidates },
+    series,
+  };
+}
+
+function baseOf(input: AnalysisInput, warnings: readonly ReadingWarning[]) {
+  return {
+    engineVersion: ENGINE_VERSION,
+    eventsPerTurn: input.settings.eventsPerTurn,
+    durationSeconds: (input.channels[0]?.length ?? 0) / input.sampleRateHz,
+    sampleRateHz: input.sampleRateHz,
+    warnings,
+  };
+}
+
+function candidatesOf({ ranked }: ShaftSearch, clockFactor: number): Candidate[] {
+  const [best] = ranked;
+  if (!best) return [];
+  return ranked.slice(0, MOST_CANDIDATES).map((hypothesis) => ({
+    shaftSpeedRpm: hypothesis.shaftSpeedRpm * clockFactor,
+    score: hypothesis.probability,
+    reason: candidateReason(hypothesis, best),
+  }));
+}
+
+/** A constant is no sound, but it is no silence either: something was connected. */
+function stillnessOf(signal: ChosenSignal): NoRotationReason {
+  return Math.abs(signal.offset) > SILENCE_RMS ? 'nothing-periodic' : 'silence';
+}
+
+/** A clock that runs fast takes more samples in a second than it says, so that every pitch seems low. */
+function clockFactorOf({ clockCorrectionPpm }: AnalysisSettings): number {
+  return 1 + fractionFromPpm(clockCorrectionPpm ?? 0);
+}
+
+function checkInput({ channels, sampleRateHz, settings }: AnalysisInput): void {
+  const [first] = channels;
+  if (!first) throw new RangeError('analyseRecording: channels must hold at least one channel');
+  if (channels.some((channel) => channel.length !== first.length)) {
+    throw new RangeError('analyseRecording: channels must be equally long');
+  }
+  if (!(sampleRateHz > 0)) throw new RangeError(`analyseRecording: sampleRateHz must be > 0, got ${sampleRateHz}`);
+  if (!(settings.eventsPerTurn > 0)) {
+    throw new RangeError(`analyseRecording: eventsPerTurn must be > 0, got ${settings.eventsPerTurn}`);
+  }
+  if (!(settings.minimumRpm > 0 && settings.maximumRpm > settings.minimumRpm)) {
+    throw new RangeError(
+      `analyseRecording: 0 < minimumRpm < maximumRpm must hold, got ${settings.minimumRpm} and ${settings.maximumRpm}`,
+    );
+  }
 }

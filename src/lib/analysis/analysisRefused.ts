@@ -1,9 +1,9 @@
 /** Why samples cannot be analysed at all. */
-export type RefusalCode = "not-finite" | "out-of-range";
+export type RefusalCode = 'not-finite' | 'out-of-range';
 
 /** Input that is no sound: the recording fails with this code instead of getting a reading. */
 export class AnalysisRefused extends Error {
-  override readonly name = "AnalysisRefused";
+  override readonly name = 'AnalysisRefused';
   readonly code: RefusalCode;
 
   constructor(code: RefusalCode, message: string) {

@@ -1,14 +1,14 @@
-import { scoreCombs } from "#lib/signal/combScore.ts";
-import type { FrontEnd, SampledSignal } from "#lib/signal/frontEnd.ts";
-import { createFrontEnd } from "#lib/signal/frontEnd.ts";
-import { createLineMaps } from "#lib/signal/lineMaps.ts";
-import { detectMainsHum, weakenMainsHum } from "#lib/signal/mainsHum.ts";
-import type { MainsHum } from "#lib/signal/mainsHum.ts";
-import { eventHertzFromRpm } from "#lib/units/rotation.ts";
-import { rankHypotheses } from "./rankHypotheses.ts";
-import type { RankedHypothesis } from "./rankHypotheses.ts";
-import type { AnalysisSettings } from "./settings.ts";
-import { findSoundFamily } from "./soundFamily.ts";
+import { scoreCombs } from '#lib/signal/combScore.ts';
+import type { FrontEnd, SampledSignal } from '#lib/signal/frontEnd.ts';
+import { createFrontEnd } from '#lib/signal/frontEnd.ts';
+import { createLineMaps } from '#lib/signal/lineMaps.ts';
+import { detectMainsHum, weakenMainsHum } from '#lib/signal/mainsHum.ts';
+import type { MainsHum } from '#lib/signal/mainsHum.ts';
+import { eventHertzFromRpm } from '#lib/units/rotation.ts';
+import { rankHypotheses } from './rankHypotheses.ts';
+import type { RankedHypothesis } from './rankHypotheses.ts';
+import type { AnalysisSettings } from './settings.ts';
+import { findSoundFamily } from './soundFamily.ts';
 
 /** Everything that was found out about what may turn. */
 export interface ShaftSearch {
@@ -28,15 +28,9 @@ const HIGHEST_EVENT_FRACTION = 0.46;
  *
  * @param recording mono, offset removed
  */
-export function findShaft(
-  recording: SampledSignal,
-  settings: AnalysisSettings,
-): ShaftSearch {
+export function findShaft(recording: SampledSignal, settings: AnalysisSettings): ShaftSearch {
   const frontEnd = createFrontEnd(recording.samples, recording.sampleRateHz);
-  const lowestEventHz = eventHertzFromRpm(
-    settings.minimumRpm,
-    settings.eventsPerTurn,
-  );
+  const lowestEventHz = eventHertzFromRpm(settings.minimumRpm, settings.eventsPerTurn);
   const highestEventHz = Math.min(
     eventHertzFromRpm(settings.maximumRpm, settings.eventsPerTurn),
     HIGHEST_EVENT_FRACTION * recording.sampleRateHz,
@@ -56,8 +50,7 @@ export function findShaft(
   const first = findSoundFamily(combs, frontEnd, null);
   if (!first) return { frontEnd, hum, ranked: [] };
   const ranked = rankHypotheses([first], combs, settings);
-  if ((ranked[0]?.probability ?? 0) >= SURE_PROBABILITY)
-    return { frontEnd, hum, ranked };
+  if ((ranked[0]?.probability ?? 0) >= SURE_PROBABILITY) return { frontEnd, hum, ranked };
   const second = findSoundFamily(combs, frontEnd, {
     family: first,
     eventsPerTurn: settings.eventsPerTurn,

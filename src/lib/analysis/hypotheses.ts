@@ -18,12 +18,10 @@ const SAME_RATIO = 1e-6;
 export function ratioHypotheses(eventsPerTurn: number): number[] {
   const ratios: number[] = [1];
   const add = (ratio: number) => {
-    if (!ratios.some((known) => Math.abs(known / ratio - 1) < SAME_RATIO))
-      ratios.push(ratio);
+    if (!ratios.some((known) => Math.abs(known / ratio - 1) < SAME_RATIO)) ratios.push(ratio);
   };
   for (let numerator = 1; numerator <= LARGEST_PLAIN; numerator++) {
-    for (let denominator = 1; denominator <= LARGEST_PLAIN; denominator++)
-      add(numerator / denominator);
+    for (let denominator = 1; denominator <= LARGEST_PLAIN; denominator++) add(numerator / denominator);
   }
   const most = Math.min(LARGEST_EVENT_DIVISOR, Math.ceil(3 * eventsPerTurn));
   for (let divisor = 1; divisor <= most; divisor++) {

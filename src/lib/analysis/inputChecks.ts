@@ -1,5 +1,5 @@
-import { AnalysisRefused } from "./analysisRefused.ts";
-import type { ReadingWarning } from "./reading.ts";
+import { AnalysisRefused } from './analysisRefused.ts';
+import type { ReadingWarning } from './reading.ts';
 
 /** Samples beyond this are no sound: full scale is ±1, and headroom of float files ends far below. */
 const LARGEST_SAMPLE = 8;
@@ -41,15 +41,9 @@ export function measureChannel(samples: Float32Array): ChannelLevel {
     if (Math.abs(value) > peak) peak = Math.abs(value);
   }
   if (!Number.isFinite(energy))
-    throw new AnalysisRefused(
-      "not-finite",
-      "The sound holds samples that are not numbers.",
-    );
+    throw new AnalysisRefused('not-finite', 'The sound holds samples that are not numbers.');
   if (peak > LARGEST_SAMPLE) {
-    throw new AnalysisRefused(
-      "out-of-range",
-      `The sound holds a sample of ${peak.toPrecision(3)} times full scale.`,
-    );
+    throw new AnalysisRefused('out-of-range', `The sound holds a sample of ${peak.toPrecision(3)} times full scale.`);
   }
   const count = Math.max(1, samples.length);
   const offset = sum / count;
@@ -81,7 +75,7 @@ function clippedFraction(samples: Float32Array, peak: number): number {
 /** Warnings about the level of the channel or mix that is analysed. */
 export function levelWarnings(level: ChannelLevel): ReadingWarning[] {
   const warnings: ReadingWarning[] = [];
-  if (level.clippedFraction > CLIPPED_FRACTION) warnings.push("clipped");
-  if (level.rms < LOW_LEVEL_RMS) warnings.push("low-level");
+  if (level.clippedFraction > CLIPPED_FRACTION) warnings.push('clipped');
+  if (level.rms < LOW_LEVEL_RMS) warnings.push('low-level');
   return warnings;
 }

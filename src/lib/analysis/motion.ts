@@ -1,7 +1,7 @@
-import { FRAME_SECONDS } from "#lib/signal/lineMap.ts";
-import type { EventTrack } from "#lib/signal/eventTrack.ts";
-import { quantile } from "#lib/statistics/quantiles.ts";
-import type { Motion } from "./reading.ts";
+import { FRAME_SECONDS } from '#lib/signal/lineMap.ts';
+import type { EventTrack } from '#lib/signal/eventTrack.ts';
+import { quantile } from '#lib/statistics/quantiles.ts';
+import type { Motion } from './reading.ts';
 
 /** Range of the middle 90 % of the speed, relative to the median, up to which a shaft counts as steady. */
 const STEADY_SPREAD = 0.012;
@@ -12,19 +12,15 @@ const LOW_QUANTILE = 0.05;
 const HIGH_QUANTILE = 0.95;
 
 /** How the shaft moved while it was heard. @param track at least one active knot */
-export function motionOf(track: EventTrack): Exclude<Motion, "none"> {
-  if (stoppedFraction(track.isActive) > LEAST_STOPPED_FRACTION)
-    return "intermittent";
-  return speedSpread(track) < STEADY_SPREAD ? "steady" : "varying";
+export function motionOf(track: EventTrack): Exclude<Motion, 'none'> {
+  if (stoppedFraction(track.isActive) > LEAST_STOPPED_FRACTION) return 'intermittent';
+  return speedSpread(track) < STEADY_SPREAD ? 'steady' : 'varying';
 }
 
 /** Range of the middle 90 % of the active speeds over their median. */
 export function speedSpread(track: EventTrack): number {
   const active = activeRates(track);
-  return (
-    (quantile(active, HIGH_QUANTILE) - quantile(active, LOW_QUANTILE)) /
-    quantile(active, 0.5)
-  );
+  return (quantile(active, HIGH_QUANTILE) - quantile(active, LOW_QUANTILE)) / quantile(active, 0.5);
 }
 
 /** Event rates at the knots where events are heard, Hz. */

@@ -1,17 +1,12 @@
-import type { CombScores } from "#lib/signal/combScore.ts";
-import { rpmFromEventHertz } from "#lib/units/rotation.ts";
-import { domainFeatures } from "./hypothesisFeatures.ts";
-import type { DomainFeatures } from "./hypothesisFeatures.ts";
-import { ratioHypotheses } from "./hypotheses.ts";
-import {
-  DOMAIN_WEIGHTS,
-  PATH_SCORE_WEIGHT,
-  SPEED_CURVATURE_WEIGHT,
-  SPEED_WEIGHT,
-} from "./rankingWeights.ts";
-import type { AnalysisSettings } from "./settings.ts";
-import { pathScoreAt } from "./soundFamily.ts";
-import type { SoundFamily } from "./soundFamily.ts";
+import type { CombScores } from '#lib/signal/combScore.ts';
+import { rpmFromEventHertz } from '#lib/units/rotation.ts';
+import { domainFeatures } from './hypothesisFeatures.ts';
+import type { DomainFeatures } from './hypothesisFeatures.ts';
+import { ratioHypotheses } from './hypotheses.ts';
+import { DOMAIN_WEIGHTS, PATH_SCORE_WEIGHT, SPEED_CURVATURE_WEIGHT, SPEED_WEIGHT } from './rankingWeights.ts';
+import type { AnalysisSettings } from './settings.ts';
+import { pathScoreAt } from './soundFamily.ts';
+import type { SoundFamily } from './soundFamily.ts';
 
 /** One speed that the sound could mean, with its evidence. */
 export interface RankedHypothesis {
@@ -45,14 +40,9 @@ export function rankHypotheses(
   combs: CombScores,
   settings: AnalysisSettings,
 ): RankedHypothesis[] {
-  const scored = families.flatMap((family) =>
-    hypothesesOf(family, combs, settings),
-  );
+  const scored = families.flatMap((family) => hypothesesOf(family, combs, settings));
   const highest = Math.max(...scored.map(({ score }) => score));
-  const total = scored.reduce(
-    (sum, { score }) => sum + Math.exp(score - highest),
-    0,
-  );
+  const total = scored.reduce((sum, { score }) => sum + Math.exp(score - highest), 0);
   const ranked = scored
     .map(({ score, hypothesis }) => ({
       ...hypothesis,
@@ -66,13 +56,10 @@ function hypothesesOf(
   family: SoundFamily,
   combs: CombScores,
   settings: AnalysisSettings,
-): { score: number; hypothesis: Omit<RankedHypothesis, "probability"> }[] {
+): { score: number; hypothesis: Omit<RankedHypothesis, 'probability'> }[] {
   const { eventsPerTurn, orders } = settings;
   return ratioHypotheses(eventsPerTurn).flatMap((ratio) => {
-    const shaftSpeedRpm = rpmFromEventHertz(
-      family.trackedHz * ratio,
-      eventsPerTurn,
-    );
+    const shaftSpeedRpm = rpmFromEventHertz(family.trackedHz * ratio, eventsPerTurn);
     if (shaftSpeedRpm < settings.minimumRpm * (1 - RANGE_SLACK)) return [];
     if (shaftSpeedRpm > settings.maximumRpm * (1 + RANGE_SLACK)) return [];
     const form = {
@@ -84,31 +71,19 @@ function hypothesesOf(
       family,
       ratio,
       shaftSpeedRpm,
-      waveform: domainFeatures(
-        family.spectra.waveform,
-        family.waveformPeaks,
-        form,
-      ),
-      envelope: domainFeatures(
-        family.spectra.envelope,
-        family.envelopePeaks,
-        form,
-      ),
+      waveform: domainFeatures(family.spectra.waveform, family.waveformPeaks, form),
+      envelope: domainFeatures(family.spectra.envelope, family.envelopePeaks, form),
       pathScore: pathScoreAt(family.path, combs, ratio),
     };
     return [{ score: scoreOf(hypothesis), hypothesis }];
   });
 }
 
-function scoreOf(hypothesis: Omit<RankedHypothesis, "probability">): number {
+function scoreOf(hypothesis: Omit<RankedHypothesis, 'probability'>): number {
   const octaves = Math.log2(hypothesis.shaftSpeedRpm / TYPICAL_RPM);
   let score =
-    PATH_SCORE_WEIGHT * hypothesis.pathScore +
-    SPEED_WEIGHT * octaves +
-    SPEED_CURVATURE_WEIGHT * octaves * octaves;
-  for (const name of Object.keys(
-    DOMAIN_WEIGHTS.waveform,
-  ) as (keyof DomainFeatures)[]) {
+    PATH_SCORE_WEIGHT * hypothesis.pathScore + SPEED_WEIGHT * octaves + SPEED_CURVATURE_WEIGHT * octaves * octaves;
+  for (const name of Object.keys(DOMAIN_WEIGHTS.waveform) as (keyof DomainFeatures)[]) {
     score +=
       DOMAIN_WEIGHTS.waveform[name] * hypothesis.waveform[name] +
       DOMAIN_WEIGHTS.envelope[name] * hypothesis.envelope[name];
@@ -120,9 +95,7 @@ function merged(ranked: readonly RankedHypothesis[]): RankedHypothesis[] {
   const answers: RankedHypothesis[] = [];
   for (const hypothesis of ranked) {
     const same = answers.findIndex(
-      (answer) =>
-        Math.abs(answer.shaftSpeedRpm / hypothesis.shaftSpeedRpm - 1) <
-        SAME_SPEED,
+      (answer) => Math.abs(answer.shaftSpeedRpm / hypothesis.shaftSpeedRpm - 1) < SAME_SPEED,
     );
     const known = answers[same];
     if (known)

@@ -1,26 +1,19 @@
 /** How the shaft moved while it was heard. */
-export const MOTIONS = ["steady", "varying", "intermittent", "none"] as const;
+export const MOTIONS = ['steady', 'varying', 'intermittent', 'none'] as const;
 export type Motion = (typeof MOTIONS)[number];
 
 /** Why nothing turning was heard. */
-export const NO_ROTATION_REASONS = [
-  "silence",
-  "hum",
-  "nothing-periodic",
-  "too-short",
-  "clipped",
-  "speech",
-] as const;
+export const NO_ROTATION_REASONS = ['silence', 'hum', 'nothing-periodic', 'too-short', 'clipped', 'speech'] as const;
 export type NoRotationReason = (typeof NO_ROTATION_REASONS)[number];
 
 /** What the reader of a reading should know about the sound it came from. */
 export const READING_WARNINGS = [
-  "clipped",
-  "low-level",
-  "dead-channel",
-  "opposite-channels",
-  "header-mismatch",
-  "partial",
+  'clipped',
+  'low-level',
+  'dead-channel',
+  'opposite-channels',
+  'header-mismatch',
+  'partial',
 ] as const;
 export type ReadingWarning = (typeof READING_WARNINGS)[number];
 
@@ -52,8 +45,8 @@ interface ReadingBase {
 
 /** A speed was found. */
 export interface MeasuredReading extends ReadingBase {
-  readonly status: "measured";
-  readonly motion: Exclude<Motion, "none">;
+  readonly status: 'measured';
+  readonly motion: Exclude<Motion, 'none'>;
   /** Median speed while turning. */
   readonly speed: UncertainSpeed;
   /** Calibrated probability that the speed is right within 1 %, [0, 1]; below 0.5 the reading is unsure. */
@@ -64,8 +57,8 @@ export interface MeasuredReading extends ReadingBase {
 
 /** Nothing turning was heard: a result, not a failure. */
 export interface NoRotationReading extends ReadingBase {
-  readonly status: "no-rotation";
-  readonly motion: "none";
+  readonly status: 'no-rotation';
+  readonly motion: 'none';
   readonly reason: NoRotationReason;
 }
 

@@ -1,12 +1,12 @@
 /** The evidence that a reading carries. Which of them exist depends on the engine. */
 export const SERIES_NAMES = [
-  "spectrum",
-  "envelopeSpectrum",
-  "orderSpectrum",
-  "spectrogram",
-  "oneTurnAverage",
-  "trend",
-  "waveform",
+  'spectrum',
+  'envelopeSpectrum',
+  'orderSpectrum',
+  'spectrogram',
+  'oneTurnAverage',
+  'trend',
+  'waveform',
 ] as const;
 export type SeriesName = (typeof SERIES_NAMES)[number];
 

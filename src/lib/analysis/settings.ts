@@ -12,7 +12,7 @@ export interface AnalysisSettings {
   /** Fastest shaft speed to consider, rpm, > `minimumRpm`. */
   readonly maximumRpm: number;
   /** `auto` takes the mean of the channels, or the louder one where they cancel; a number takes that channel, from 0. */
-  readonly channel: "auto" | number;
+  readonly channel: 'auto' | number;
   /** Start of the stretch to analyse, seconds from the start of the recording. */
   readonly fromSeconds: number | null;
   /** End of the stretch to analyse, seconds from the start of the recording. */
@@ -30,7 +30,7 @@ export const DEFAULT_ANALYSIS_SETTINGS: AnalysisSettings = {
   orders: [],
   minimumRpm: DEFAULT_MINIMUM_RPM,
   maximumRpm: DEFAULT_MAXIMUM_RPM,
-  channel: "auto",
+  channel: 'auto',
   fromSeconds: null,
   toSeconds: null,
   clockCorrectionPpm: null,

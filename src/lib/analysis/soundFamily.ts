@@ -1,15 +1,15 @@
-import type { CombScores } from "#lib/signal/combScore.ts";
-import { trackFromCells } from "#lib/signal/eventTrack.ts";
-import type { FrontEnd } from "#lib/signal/frontEnd.ts";
-import { cellShift } from "#lib/signal/logGrid.ts";
-import { orderPeaks, orderSpectra } from "#lib/signal/orderLevels.ts";
-import type { OrderPeak, OrderSpectra } from "#lib/signal/orderLevels.ts";
-import { refineTrack } from "#lib/signal/refineTrack.ts";
-import type { RefinedTrack } from "#lib/signal/refineTrack.ts";
-import { steadyPath, trackPath } from "#lib/signal/trackPath.ts";
-import type { TrackPath } from "#lib/signal/trackPath.ts";
-import { median } from "#lib/statistics/quantiles.ts";
-import { ratioHypotheses } from "./hypotheses.ts";
+import type { CombScores } from '#lib/signal/combScore.ts';
+import { trackFromCells } from '#lib/signal/eventTrack.ts';
+import type { FrontEnd } from '#lib/signal/frontEnd.ts';
+import { cellShift } from '#lib/signal/logGrid.ts';
+import { orderPeaks, orderSpectra } from '#lib/signal/orderLevels.ts';
+import type { OrderPeak, OrderSpectra } from '#lib/signal/orderLevels.ts';
+import { refineTrack } from '#lib/signal/refineTrack.ts';
+import type { RefinedTrack } from '#lib/signal/refineTrack.ts';
+import { steadyPath, trackPath } from '#lib/signal/trackPath.ts';
+import type { TrackPath } from '#lib/signal/trackPath.ts';
+import { median } from '#lib/statistics/quantiles.ts';
+import { ratioHypotheses } from './hypotheses.ts';
 
 /** A set of lines that move together: one source of sound, its true rate known up to a ratio. */
 export interface SoundFamily {
@@ -31,7 +31,7 @@ export interface FamilyQuality {
   readonly pathScore: number;
   /** Part of the time in which it is heard, [0, 1]. */
   readonly activeFraction: number;
-  /** Mean movement of the path from frame to frame, cells, each counted up to 6: shafts have inertia. */
+  /** Mean change of the path's slope from frame to frame, cells, each counted up to 6: shafts have inertia, voices and tunes have not. */
   readonly roughness: number;
   /** Sum over the lines of coherent power over noise, on a logarithmic scale: 0 for noise. */
   readonly coherence: number;
@@ -59,14 +59,8 @@ export function findSoundFamily(
   } | null,
 ): SoundFamily | null {
   if (combs.cellCount === 0) return null;
-  const tracked = trackPath(
-    combs,
-    other ? relativesOf(other.family.path, other.eventsPerTurn, combs) : null,
-  );
-  const least = Math.max(
-    LEAST_ACTIVE_FRAMES,
-    LEAST_ACTIVE_FRACTION * combs.frameCount,
-  );
+  const tracked = trackPath(combs, other ? relativesOf(other.family.path, other.eventsPerTurn, combs) : null);
+  const least = Math.max(LEAST_ACTIVE_FRAMES, LEAST_ACTIVE_FRACTION * combs.frameCount);
   const isFallback = tracked.activeCount < least;
   if (isFallback && other) return null;
   const path = isFallback ? steadyPath(combs) : tracked;
@@ -86,32 +80,25 @@ export function findSoundFamily(
       most: MOST_PEAKS,
     }),
     quality: qualityOf(path, refined),
-    trackedHz: median(
-      refined.track.eventHz.filter(
-        (_, knot) => refined.track.isActive[knot] === 1,
-      ),
-    ),
+    trackedHz: median(refined.track.eventHz.filter((_, knot) => refined.track.isActive[knot] === 1)),
   };
 }
 
-const LARGEST_MOVE_CELLS = 6;
+const LARGEST_CHANGE_CELLS = 6;
 
 function qualityOf(path: TrackPath, { lines }: RefinedTrack): FamilyQuality {
-  let movement = 0;
+  let change = 0;
   let steps = 0;
-  for (let frame = 1; frame < path.cells.length; frame++) {
-    const [before, here] = [
-      path.cells[frame - 1] as number,
-      path.cells[frame] as number,
-    ];
-    if (before < 0 || here < 0) continue;
-    movement += Math.min(LARGEST_MOVE_CELLS, Math.abs(here - before));
+  for (let frame = 2; frame < path.cells.length; frame++) {
+    const [first, middle, last] = path.cells.subarray(frame - 2, frame + 1) as unknown as [number, number, number];
+    if (first < 0 || middle < 0 || last < 0) continue;
+    change += Math.min(LARGEST_CHANGE_CELLS, Math.abs(first - 2 * middle + last));
     steps++;
   }
   return {
     pathScore: path.meanScore,
     activeFraction: path.activeCount / Math.max(1, path.cells.length),
-    roughness: steps > 0 ? movement / steps : 0,
+    roughness: steps > 0 ? change / steps : 0,
     coherence: Math.log1p(lines.reduce((sum, line) => sum + line.weight, 0)),
   };
 }
@@ -127,26 +114,16 @@ function relativesOf(
   const reach = new Uint8Array(2 * combs.cellCount + 1);
   for (const ratio of ratioHypotheses(eventsPerTurn)) {
     const centre = cellShift(ratio) + combs.cellCount;
-    reach.fill(
-      1,
-      Math.max(0, centre - MASK_REACH_CELLS),
-      Math.max(0, centre + MASK_REACH_CELLS + 1),
-    );
+    reach.fill(1, Math.max(0, centre - MASK_REACH_CELLS), Math.max(0, centre + MASK_REACH_CELLS + 1));
   }
   return (frame, cell) => {
     const own = path.cells[frame] as number;
-    return (
-      own >= 0 && reach[combs.firstCell + cell - own + combs.cellCount] === 1
-    );
+    return own >= 0 && reach[combs.firstCell + cell - own + combs.cellCount] === 1;
   };
 }
 
 /** Mean comb score along a family's path moved by a ratio; 0 where that leaves the allowed range. */
-export function pathScoreAt(
-  path: TrackPath,
-  combs: CombScores,
-  ratio: number,
-): number {
+export function pathScoreAt(path: TrackPath, combs: CombScores, ratio: number): number {
   const shift = cellShift(ratio) - combs.firstCell;
   let sum = 0;
   let count = 0;

@@ -1,11 +1,11 @@
-import { cyclesAt, longestActiveStretch } from "#lib/signal/eventTrack.ts";
-import { FRAME_SECONDS } from "#lib/signal/lineMap.ts";
-import { phaseSlope } from "#lib/signal/phaseSlope.ts";
-import type { PhaseSlope } from "#lib/signal/phaseSlope.ts";
-import type { RefinedTrack } from "#lib/signal/refineTrack.ts";
-import { median, quantile } from "#lib/statistics/quantiles.ts";
-import { fractionFromPpm } from "#lib/units/ratios.ts";
-import { activeRates, motionOf, speedSpread } from "./motion.ts";
+import { cyclesAt, longestActiveStretch } from '#lib/signal/eventTrack.ts';
+import { FRAME_SECONDS } from '#lib/signal/lineMap.ts';
+import { phaseSlope } from '#lib/signal/phaseSlope.ts';
+import type { PhaseSlope } from '#lib/signal/phaseSlope.ts';
+import type { RefinedTrack } from '#lib/signal/refineTrack.ts';
+import { median, quantile } from '#lib/statistics/quantiles.ts';
+import { fractionFromPpm } from '#lib/units/ratios.ts';
+import { activeRates, motionOf, speedSpread } from './motion.ts';
 
 /** The one figure of a track, as an event rate. */
 export interface SpeedFigure {
@@ -35,20 +35,13 @@ const MEDIAN_SHIFT = 0.03;
  *
  * @param hasClockCorrection whether the device's clock was measured
  */
-export function speedFigure(
-  refined: RefinedTrack,
-  hasClockCorrection: boolean,
-): SpeedFigure {
+export function speedFigure(refined: RefinedTrack, hasClockCorrection: boolean): SpeedFigure {
   const rates = activeRates(refined.track);
   const middle = median(rates);
-  const clock = fractionFromPpm(
-    hasClockCorrection ? CORRECTED_CLOCK_PPM : UNKNOWN_CLOCK_PPM,
-  );
+  const clock = fractionFromPpm(hasClockCorrection ? CORRECTED_CLOCK_PPM : UNKNOWN_CLOCK_PPM);
   const slope = slopeOfLongestStretch(refined);
-  if (motionOf(refined.track) === "steady") {
-    const noise = slope
-      ? (COVERAGE_FACTOR * slope.standardErrorHz) / middle
-      : fallbackUncertainty(refined);
+  if (motionOf(refined.track) === 'steady') {
+    const noise = slope ? (COVERAGE_FACTOR * slope.standardErrorHz) / middle : fallbackUncertainty(refined);
     if (
       slope &&
       slope.wanderRatio <= WANDER_LIMIT &&
@@ -56,27 +49,14 @@ export function speedFigure(
     ) {
       return symmetric(slope.eventHz, Math.hypot(noise, clock));
     }
-    return symmetric(
-      middle,
-      Math.hypot(noise, clock, WANDER_FRACTION * speedSpread(refined.track)),
-    );
+    return symmetric(middle, Math.hypot(noise, clock, WANDER_FRACTION * speedSpread(refined.track)));
   }
-  const noise = slope
-    ? slope.standardErrorHz / middle
-    : fallbackUncertainty(refined);
+  const noise = slope ? slope.standardErrorHz / middle : fallbackUncertainty(refined);
   const shift = MEDIAN_SHIFT;
   return {
     eventHz: middle,
-    relativeBelow: Math.hypot(
-      clock,
-      Math.min(noise, LARGEST_MOVING_NOISE),
-      1 - quantile(rates, 0.5 - shift) / middle,
-    ),
-    relativeAbove: Math.hypot(
-      clock,
-      Math.min(noise, LARGEST_MOVING_NOISE),
-      quantile(rates, 0.5 + shift) / middle - 1,
-    ),
+    relativeBelow: Math.hypot(clock, Math.min(noise, LARGEST_MOVING_NOISE), 1 - quantile(rates, 0.5 - shift) / middle),
+    relativeAbove: Math.hypot(clock, Math.min(noise, LARGEST_MOVING_NOISE), quantile(rates, 0.5 + shift) / middle - 1),
   };
 }
 
@@ -98,12 +78,7 @@ function slopeOfLongestStretch(refined: RefinedTrack): PhaseSlope | null {
   const blockAt = (timeSeconds: number) =>
     Math.max(
       0,
-      Math.min(
-        refined.grid.blockCount,
-        Math.round(
-          cyclesAt(refined.phase, timeSeconds) / refined.grid.cyclesPerBlock,
-        ),
-      ),
+      Math.min(refined.grid.blockCount, Math.round(cyclesAt(refined.phase, timeSeconds) / refined.grid.cyclesPerBlock)),
     );
   return phaseSlope(refined, blockAt(startSeconds), blockAt(endSeconds));
 }

@@ -1,5 +1,5 @@
-import type { MotorGeometry } from "./geometry.ts";
-import { leastCommonMultiple } from "./leastCommonMultiple.ts";
+import type { MotorGeometry } from './geometry.ts';
+import { leastCommonMultiple } from './leastCommonMultiple.ts';
 
 /** Commutation steps of a three-phase bridge in one electrical turn: the torque, and so the sound, ripples with it. */
 const STEPS_PER_ELECTRICAL_TURN = 6;
@@ -37,37 +37,31 @@ interface Source {
  * Reference: Microchip application note AN3049 (ripple counting of brushed motors): ripples per turn =
  * poles · segments / gcd(poles, segments).
  */
-export function eventsPerTurnFromGeometry(
-  geometry: MotorGeometry,
-): EventsPerTurn {
-  const sources = [
-    commutator(geometry),
-    blades(geometry),
-    teeth(geometry),
-    magnets(geometry),
-  ].filter((source) => source !== null);
+export function eventsPerTurnFromGeometry(geometry: MotorGeometry): EventsPerTurn {
+  const sources = [commutator(geometry), blades(geometry), teeth(geometry), magnets(geometry)].filter(
+    (source) => source !== null,
+  );
   const orders = [...new Set(sources.flatMap((source) => source.orders))];
   const [eventsPerTurn] = orders;
   if (eventsPerTurn === undefined) {
     return {
       eventsPerTurn: 1,
       orders: [1],
-      explanation:
-        "No part that makes events is known, so one event per turn is assumed.",
+      explanation: 'No part that makes events is known, so one event per turn is assumed.',
     };
   }
   return {
     eventsPerTurn,
     orders,
-    explanation: sources.map((source) => source.reason).join(" "),
+    explanation: sources.map((source) => source.reason).join(' '),
   };
 }
 
 function commutator({ poles, segments }: MotorGeometry): Source | null {
   if (segments === null) return null;
-  const sites = countOf("poles", poles ?? 2);
-  const count = leastCommonMultiple(sites, countOf("segments", segments));
-  const assumed = poles === null ? " (two brush sites assumed)" : "";
+  const sites = countOf('poles', poles ?? 2);
+  const count = leastCommonMultiple(sites, countOf('segments', segments));
+  const assumed = poles === null ? ' (two brush sites assumed)' : '';
   return {
     orders: [count],
     reason: `${segments} segments under ${sites} brush sites${assumed} switch ${count} times a turn.`,
@@ -76,42 +70,33 @@ function commutator({ poles, segments }: MotorGeometry): Source | null {
 
 function blades(geometry: MotorGeometry): Source | null {
   if (geometry.blades === null) return null;
-  const count = countOf("blades", geometry.blades);
+  const count = countOf('blades', geometry.blades);
   return {
     orders: [count],
-    reason: `${count} ${count === 1 ? "blade passes" : "blades pass"} once a turn each.`,
+    reason: `${count} ${count === 1 ? 'blade passes' : 'blades pass'} once a turn each.`,
   };
 }
 
 function teeth(geometry: MotorGeometry): Source | null {
   if (geometry.teeth === null) return null;
-  const count = countOf("teeth", geometry.teeth);
+  const count = countOf('teeth', geometry.teeth);
   return { orders: [count], reason: `${count} teeth mesh once a turn each.` };
 }
 
 function magnets(geometry: MotorGeometry): Source | null {
   if (geometry.magnets === null) return null;
-  const count = countOf("magnets", geometry.magnets);
-  if (count % 2 !== 0)
-    throw new RangeError(
-      `eventsPerTurnFromGeometry: magnets must be even, got ${count}`,
-    );
+  const count = countOf('magnets', geometry.magnets);
+  if (count % 2 !== 0) throw new RangeError(`eventsPerTurnFromGeometry: magnets must be even, got ${count}`);
   const polePairs = count / 2;
   return {
-    orders: [
-      STEPS_PER_ELECTRICAL_TURN * polePairs,
-      PULLS_PER_POLE_PAIR * polePairs,
-      polePairs,
-    ],
+    orders: [STEPS_PER_ELECTRICAL_TURN * polePairs, PULLS_PER_POLE_PAIR * polePairs, polePairs],
     reason: `${polePairs} pole pairs of a three-phase motor ripple ${STEPS_PER_ELECTRICAL_TURN * polePairs} times a turn.`,
   };
 }
 
 function countOf(name: keyof MotorGeometry, value: number): number {
   if (!Number.isInteger(value) || value < 1) {
-    throw new RangeError(
-      `eventsPerTurnFromGeometry: ${name} must be a positive integer, got ${value}`,
-    );
+    throw new RangeError(`eventsPerTurnFromGeometry: ${name} must be a positive integer, got ${value}`);
   }
   return value;
 }

@@ -11,9 +11,7 @@ function greatestCommonDivisor(a: number, b: number): number {
 export function leastCommonMultiple(a: number, b: number): number {
   for (const value of [a, b]) {
     if (!Number.isInteger(value) || value < 1) {
-      throw new RangeError(
-        `leastCommonMultiple: both numbers must be positive integers, got ${value}`,
-      );
+      throw new RangeError(`leastCommonMultiple: both numbers must be positive integers, got ${value}`);
     }
   }
   return (a / greatestCommonDivisor(a, b)) * b;

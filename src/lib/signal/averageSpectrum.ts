@@ -1,5 +1,5 @@
-import { fftPlan } from "./fftPlan.ts";
-import { hannWindow } from "./window.ts";
+import { fftPlan } from './fftPlan.ts';
+import { hannWindow } from './window.ts';
 
 /** A power spectrum and the frequencies it stands at. */
 export interface PowerSpectrum {
@@ -30,32 +30,22 @@ export function averageSpectrum(
   const plan = fftPlan(size);
   const length = Math.min(size, samples.length);
   const window = hannWindow(length);
-  const available = Math.max(
-    1,
-    Math.floor((samples.length - length) / (length / 2)) + 1,
-  );
+  const available = Math.max(1, Math.floor((samples.length - length) / (length / 2)) + 1);
   const segmentCount = Math.min(available, mostSegments);
   const power = new Float64Array(size / 2 + 1);
   // Two sides of the spectrum and the window's coherent gain of a half: 2 / (length / 2)².
   const scale = 2 / (length / 2) ** 2 / segmentCount;
   for (let segment = 0; segment < segmentCount; segment++) {
-    const start =
-      segmentCount === 1
-        ? 0
-        : Math.floor(
-            (segment * (samples.length - length)) / (segmentCount - 1),
-          );
+    const start = segmentCount === 1 ? 0 : Math.floor((segment * (samples.length - length)) / (segmentCount - 1));
     plan.input.fill(0);
     for (let sample = 0; sample < length; sample++) {
-      plan.input[sample] =
-        (samples[start + sample] as number) * (window[sample] as number);
+      plan.input[sample] = (samples[start + sample] as number) * (window[sample] as number);
     }
     const spectrum = plan.transformReal();
     for (let bin = 0; bin < power.length; bin++) {
       const real = spectrum[2 * bin] as number;
       const imaginary = spectrum[2 * bin + 1] as number;
-      power[bin] =
-        (power[bin] as number) + scale * (real * real + imaginary * imaginary);
+      power[bin] = (power[bin] as number) + scale * (real * real + imaginary * imaginary);
     }
   }
   return { power, binHz: sampleRateHz / size, segmentCount };

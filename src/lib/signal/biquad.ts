@@ -24,25 +24,13 @@ interface SectionDesign {
  */
 export function highPassBiquad(design: SectionDesign): Biquad {
   const { cosine, alpha } = angleOf(design);
-  return normalised(
-    (1 + cosine) / 2,
-    -(1 + cosine),
-    (1 + cosine) / 2,
-    cosine,
-    alpha,
-  );
+  return normalised((1 + cosine) / 2, -(1 + cosine), (1 + cosine) / 2, cosine, alpha);
 }
 
 /** Second-order low-pass, 12 dB per octave, unit gain at 0 Hz. Reference: as `highPassBiquad`. */
 export function lowPassBiquad(design: SectionDesign): Biquad {
   const { cosine, alpha } = angleOf(design);
-  return normalised(
-    (1 - cosine) / 2,
-    1 - cosine,
-    (1 - cosine) / 2,
-    cosine,
-    alpha,
-  );
+  return normalised((1 - cosine) / 2, 1 - cosine, (1 - cosine) / 2, cosine, alpha);
 }
 
 /** Second-order band-pass with unit gain at the centre. Reference: as `highPassBiquad`. */
@@ -70,9 +58,7 @@ export function filterInPlace<Samples extends Float32Array | Float64Array>(
  *
  * @returns a function that filters a piece in place
  */
-export function createFilter(
-  sections: readonly Biquad[],
-): (piece: Float32Array | Float64Array) => void {
+export function createFilter(sections: readonly Biquad[]): (piece: Float32Array | Float64Array) => void {
   const delays = new Float64Array(2 * sections.length);
   return (piece) => {
     for (const [index, { b0, b1, b2, a1, a2 }] of sections.entries()) {
@@ -96,21 +82,13 @@ function angleOf({ frequencyHz, sampleRateHz, quality }: SectionDesign): {
   alpha: number;
 } {
   if (!(frequencyHz > 0 && frequencyHz < sampleRateHz / 2)) {
-    throw new RangeError(
-      `biquad: frequencyHz must be in (0, ${sampleRateHz / 2}), got ${frequencyHz}`,
-    );
+    throw new RangeError(`biquad: frequencyHz must be in (0, ${sampleRateHz / 2}), got ${frequencyHz}`);
   }
   const angle = (2 * Math.PI * frequencyHz) / sampleRateHz;
   return { cosine: Math.cos(angle), alpha: Math.sin(angle) / (2 * quality) };
 }
 
-function normalised(
-  b0: number,
-  b1: number,
-  b2: number,
-  cosine: number,
-  alpha: number,
-): Biquad {
+function normalised(b0: number, b1: number, b2: number, cosine: number, alpha: number): Biquad {
   const a0 = 1 + alpha;
   return {
     b0: b0 / a0,

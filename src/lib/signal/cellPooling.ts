@@ -1,4 +1,4 @@
-import { hertzOfCell } from "./logGrid.ts";
+import { hertzOfCell } from './logGrid.ts';
 
 /** Main-lobe width of a Hann window in bins: bins nearer than this are not independent. */
 const INDEPENDENT_BINS = 1.5;
@@ -49,41 +49,26 @@ export function createCellPooling(options: {
     const centre = hertzOfCell(cell) / binHz;
     const widthBins = high - low;
     const isWide = widthBins > 1;
-    pooling.firstBin[index] = isWide
-      ? Math.ceil(low - 0.25)
-      : Math.floor(centre);
-    pooling.endBin[index] = isWide
-      ? Math.floor(high + 0.25) + 1
-      : Math.floor(centre);
+    pooling.firstBin[index] = isWide ? Math.ceil(low - 0.25) : Math.floor(centre);
+    pooling.endBin[index] = isWide ? Math.floor(high + 0.25) + 1 : Math.floor(centre);
     pooling.fraction[index] = centre - Math.floor(centre);
     const independent = Math.max(1, widthBins / INDEPENDENT_BINS);
     // Expected maximum of m exponential variables, in nepers above their mean log.
     pooling.threshold[index] =
-      MARGIN_NEPERS +
-      MEAN_LOG_BIAS_NEPERS +
-      Math.log(Math.max(1, Math.log(independent) + MEAN_LOG_BIAS_NEPERS));
+      MARGIN_NEPERS + MEAN_LOG_BIAS_NEPERS + Math.log(Math.max(1, Math.log(independent) + MEAN_LOG_BIAS_NEPERS));
   }
   return pooling;
 }
 
 /** Level of one cell, nepers above the floor. */
-export function pooledLevel(
-  pooling: CellPooling,
-  levels: Float32Array,
-  index: number,
-): number {
+export function pooledLevel(pooling: CellPooling, levels: Float32Array, index: number): number {
   const first = pooling.firstBin[index] as number;
   const end = pooling.endBin[index] as number;
   if (end === first) {
     const below = levels[first] as number;
-    return (
-      below +
-      (pooling.fraction[index] as number) *
-        ((levels[first + 1] as number) - below)
-    );
+    return below + (pooling.fraction[index] as number) * ((levels[first + 1] as number) - below);
   }
   let highest = levels[first] as number;
-  for (let bin = first + 1; bin < end; bin++)
-    highest = Math.max(highest, levels[bin] as number);
+  for (let bin = first + 1; bin < end; bin++) highest = Math.max(highest, levels[bin] as number);
   return highest;
 }

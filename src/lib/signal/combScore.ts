@@ -1,6 +1,6 @@
-import type { LineMap } from "./lineMap.ts";
-import type { LineMaps } from "./lineMaps.ts";
-import { cellOfHertz, cellShift } from "./logGrid.ts";
+import type { LineMap } from './lineMap.ts';
+import type { LineMaps } from './lineMaps.ts';
+import { cellOfHertz, cellShift } from './logGrid.ts';
 
 /** Score of every event rate at every time. */
 export interface CombScores {
@@ -45,10 +45,7 @@ export function scoreCombs(
 ): CombScores {
   const { frameCount } = maps.waveform;
   const firstCell = cellOfHertz(options.lowestEventHz);
-  const endCell = Math.min(
-    maps.waveform.cellCount,
-    cellOfHertz(options.highestEventHz) + 1,
-  );
+  const endCell = Math.min(maps.waveform.cellCount, cellOfHertz(options.highestEventHz) + 1);
   const cellCount = Math.max(0, endCell - firstCell);
   const scores = new Float32Array(frameCount * cellCount);
   const target = { frameCount, firstCell, cellCount, scores };
@@ -75,8 +72,7 @@ export function scoreCombs(
       reserve: SHAFT_WEIGHT_RESERVE,
     });
   }
-  for (let index = 0; index < scores.length; index++)
-    scores[index] = Math.max(LOWEST_SCORE, scores[index] as number);
+  for (let index = 0; index < scores.length; index++) scores[index] = Math.max(LOWEST_SCORE, scores[index] as number);
   return target;
 }
 
@@ -103,21 +99,12 @@ function addComb(target: CombScores, map: LineMap, comb: Comb): void {
 }
 
 /** Weight of the comb at each cell, normalised by the teeth that the map covers; shape [cellCount]. */
-function combScales(
-  target: CombScores,
-  map: LineMap,
-  comb: Comb,
-): Float32Array {
+function combScales(target: CombScores, map: LineMap, comb: Comb): Float32Array {
   const scales = new Float32Array(target.cellCount);
   for (let cell = 0; cell < scales.length; cell++) {
     let covered = comb.reserve;
     for (const [index, harmonicWeight] of HARMONIC_WEIGHTS.entries()) {
-      if (
-        map.isCovered[
-          target.firstCell + cell + comb.shift + cellShift(index + 1)
-        ]
-      )
-        covered += harmonicWeight;
+      if (map.isCovered[target.firstCell + cell + comb.shift + cellShift(index + 1)]) covered += harmonicWeight;
     }
     scales[cell] = comb.weight / covered;
   }
@@ -138,19 +125,14 @@ function addShifted(
   },
 ): void {
   const first = Math.max(0, -(target.firstCell + shift));
-  const end = Math.min(
-    target.cellCount,
-    map.cellCount - target.firstCell - shift,
-  );
+  const end = Math.min(target.cellCount, map.cellCount - target.firstCell - shift);
   for (let frame = 0; frame < target.frameCount; frame++) {
     const source = frame * map.cellCount + target.firstCell + shift;
     const row = frame * target.cellCount;
     for (let cell = first; cell < end; cell++) {
       target.scores[row + cell] =
         (target.scores[row + cell] as number) +
-        weight *
-          (scales[cell] as number) *
-          (map.strengths[source + cell] as number);
+        weight * (scales[cell] as number) * (map.strengths[source + cell] as number);
     }
   }
 }

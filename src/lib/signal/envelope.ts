@@ -1,5 +1,5 @@
-import { createFilter } from "./biquad.ts";
-import type { Biquad } from "./biquad.ts";
+import { createFilter } from './biquad.ts';
+import type { Biquad } from './biquad.ts';
 
 /** Samples that are filtered at a time. */
 const CHUNK_SAMPLES = 16_384;
@@ -20,30 +20,19 @@ const LOUDEST_RATIO = 6;
  * @param sections filter, run from rest
  * @returns shape [floor(sampleCount / factor)]
  */
-export function filteredEnvelope(
-  samples: Float32Array,
-  sections: readonly Biquad[],
-  factor: number,
-): Float32Array {
+export function filteredEnvelope(samples: Float32Array, sections: readonly Biquad[], factor: number): Float32Array {
   const output = new Float32Array(Math.floor(samples.length / factor));
   const filter = createFilter(sections);
   const blocksPerChunk = Math.ceil(CHUNK_SAMPLES / factor);
   const chunk = new Float32Array(blocksPerChunk * factor);
-  for (
-    let firstBlock = 0;
-    firstBlock < output.length;
-    firstBlock += blocksPerChunk
-  ) {
+  for (let firstBlock = 0; firstBlock < output.length; firstBlock += blocksPerChunk) {
     const blocks = Math.min(blocksPerChunk, output.length - firstBlock);
     const piece = chunk.subarray(0, blocks * factor);
-    piece.set(
-      samples.subarray(firstBlock * factor, (firstBlock + blocks) * factor),
-    );
+    piece.set(samples.subarray(firstBlock * factor, (firstBlock + blocks) * factor));
     filter(piece);
     for (let block = 0, sample = 0; block < blocks; block++) {
       let sum = 0;
-      for (let inside = 0; inside < factor; inside++)
-        sum += Math.abs(piece[sample++] as number);
+      for (let inside = 0; inside < factor; inside++) sum += Math.abs(piece[sample++] as number);
       output[firstBlock + block] = sum / factor;
     }
   }
@@ -58,23 +47,13 @@ export function filteredEnvelope(
  * @param meanSeconds length of the running mean, longer than two events
  * @returns the same array; mean near 0, range [−1, 5]; all −1 … 0 where the input is silent
  */
-export function normalisedEnvelope(
-  envelope: Float32Array,
-  sampleRateHz: number,
-  meanSeconds: number,
-): Float32Array {
-  const running = runningMean(
-    envelope,
-    Math.max(1, Math.round((meanSeconds * sampleRateHz) / 2)),
-  );
+export function normalisedEnvelope(envelope: Float32Array, sampleRateHz: number, meanSeconds: number): Float32Array {
+  const running = runningMean(envelope, Math.max(1, Math.round((meanSeconds * sampleRateHz) / 2)));
   let total = 0;
   for (const value of envelope) total += value;
-  const floor =
-    (MEAN_FLOOR_FRACTION * total) / Math.max(1, envelope.length) +
-    Number.MIN_VALUE;
+  const floor = (MEAN_FLOOR_FRACTION * total) / Math.max(1, envelope.length) + Number.MIN_VALUE;
   for (let sample = 0; sample < envelope.length; sample++) {
-    const ratio =
-      (envelope[sample] as number) / ((running[sample] as number) + floor);
+    const ratio = (envelope[sample] as number) / ((running[sample] as number) + floor);
     envelope[sample] = Math.min(LOUDEST_RATIO, ratio) - 1;
   }
   return envelope;
@@ -85,17 +64,13 @@ export function normalisedEnvelope(
  *
  * @returns a new Float32Array of the same shape
  */
-export function runningMean(
-  samples: Float32Array,
-  halfWidth: number,
-): Float32Array {
+export function runningMean(samples: Float32Array, halfWidth: number): Float32Array {
   const means = new Float32Array(samples.length);
   let sum = 0;
   let first = 0;
   let end = 0;
   for (let sample = 0; sample < samples.length; sample++) {
-    for (; end < Math.min(samples.length, sample + halfWidth + 1); end++)
-      sum += samples[end] as number;
+    for (; end < Math.min(samples.length, sample + halfWidth + 1); end++) sum += samples[end] as number;
     for (; first < sample - halfWidth; first++) sum -= samples[first] as number;
     means[sample] = sum / (end - first);
   }

@@ -1,5 +1,5 @@
-import { FRAME_SECONDS } from "./lineMap.ts";
-import { hertzOfCell } from "./logGrid.ts";
+import { FRAME_SECONDS } from './lineMap.ts';
+import { hertzOfCell } from './logGrid.ts';
 
 /** Course of the event rate over time; between knots it is linear, beyond them constant. */
 export interface EventTrack {
@@ -25,9 +25,7 @@ const SMOOTHING_KNOTS = 2;
 export function trackFromCells(cells: Int32Array): EventTrack {
   const isActive = Uint8Array.from(cells, (cell) => (cell >= 0 ? 1 : 0));
   const filled = fillGaps(cells);
-  const middle = filled.map((cell, knot) =>
-    medianOfThree(filled[knot - 1] ?? cell, cell, filled[knot + 1] ?? cell),
-  );
+  const middle = filled.map((cell, knot) => medianOfThree(filled[knot - 1] ?? cell, cell, filled[knot + 1] ?? cell));
   const eventHz = middle.map((_, knot) => {
     let sum = 0;
     let weights = 0;
@@ -46,10 +44,7 @@ export function trackFromCells(cells: Int32Array): EventTrack {
 function fillGaps(cells: Int32Array): Float64Array {
   const filled = Float64Array.from(cells);
   const first = cells.find((cell) => cell >= 0);
-  if (first === undefined)
-    throw new RangeError(
-      "trackFromCells: cells must hold at least one that is not silent",
-    );
+  if (first === undefined) throw new RangeError('trackFromCells: cells must hold at least one that is not silent');
   let last = first;
   for (let frame = 0; frame < filled.length; frame++) {
     if ((filled[frame] as number) < 0) filled[frame] = last;
@@ -104,40 +99,25 @@ export function eventPhase(track: EventTrack): EventPhase {
   const cyclesAtKnot = new Float64Array(eventHz.length);
   let cycles = (eventHz[0] ?? 0) * knotSeconds(0);
   for (let knot = 0; knot < eventHz.length; knot++) {
-    if (knot > 0)
-      cycles +=
-        (FRAME_SECONDS *
-          ((eventHz[knot - 1] as number) + (eventHz[knot] as number))) /
-        2;
+    if (knot > 0) cycles += (FRAME_SECONDS * ((eventHz[knot - 1] as number) + (eventHz[knot] as number))) / 2;
     cyclesAtKnot[knot] = cycles;
   }
   return { cyclesAtKnot, track };
 }
 
 /** Events since the start of the recording at a time. */
-export function cyclesAt(
-  { cyclesAtKnot, track }: EventPhase,
-  timeSeconds: number,
-): number {
+export function cyclesAt({ cyclesAtKnot, track }: EventPhase, timeSeconds: number): number {
   const last = cyclesAtKnot.length - 1;
-  const knot = Math.max(
-    0,
-    Math.min(last, Math.floor(timeSeconds / FRAME_SECONDS - 0.5)),
-  );
+  const knot = Math.max(0, Math.min(last, Math.floor(timeSeconds / FRAME_SECONDS - 0.5)));
   const since = timeSeconds - knotSeconds(knot);
   const hertz = track.eventHz[knot] as number;
   const isBeyond = knot === last || since < 0;
-  const slope = isBeyond
-    ? 0
-    : ((track.eventHz[knot + 1] as number) - hertz) / FRAME_SECONDS;
+  const slope = isBeyond ? 0 : ((track.eventHz[knot + 1] as number) - hertz) / FRAME_SECONDS;
   return (cyclesAtKnot[knot] as number) + since * (hertz + (slope * since) / 2);
 }
 
 /** Inverse of `cyclesAt` for a rising sequence of phases: remembers where it was. */
-export function createSecondsAt({
-  cyclesAtKnot,
-  track,
-}: EventPhase): (cycles: number) => number {
+export function createSecondsAt({ cyclesAtKnot, track }: EventPhase): (cycles: number) => number {
   const last = cyclesAtKnot.length - 1;
   let knot = 0;
   return (cycles) => {
@@ -148,10 +128,6 @@ export function createSecondsAt({
     if (knot === last || ahead < 0) return knotSeconds(knot) + ahead / hertz;
     const slope = ((track.eventHz[knot + 1] as number) - hertz) / FRAME_SECONDS;
     // Root of hertz·t + slope·t²/2 = ahead in the form that stays exact as the slope vanishes.
-    return (
-      knotSeconds(knot) +
-      (2 * ahead) /
-        (hertz + Math.sqrt(Math.max(0, hertz * hertz + 2 * slope * ahead)))
-    );
+    return knotSeconds(knot) + (2 * ahead) / (hertz + Math.sqrt(Math.max(0, hertz * hertz + 2 * slope * ahead)));
   };
 }

@@ -1,5 +1,5 @@
 /** The part of fft.js 4 that the project uses; the package brings no types. */
-declare module "fft.js" {
+declare module 'fft.js' {
   export default class FFT {
     /** @param size power of two ≥ 2 */
     constructor(size: number);

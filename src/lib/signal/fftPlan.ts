@@ -1,4 +1,4 @@
-import FFT from "fft.js";
+import FFT from 'fft.js';
 
 /** A transform of one size with its twiddle factors and work buffers. */
 export interface FftPlan {
@@ -42,9 +42,7 @@ export function fftPlan(size: number): FftPlan {
 
 function createFftPlan(size: number): FftPlan {
   if (!Number.isInteger(Math.log2(size)) || size < 2 || size > 2 ** 22) {
-    throw new RangeError(
-      `fftPlan: size must be a power of two in [2, 4194304], got ${size}`,
-    );
+    throw new RangeError(`fftPlan: size must be a power of two in [2, 4194304], got ${size}`);
   }
   const transform = new FFT(size);
   // Typed twiddle factors keep the inner loops on unboxed numbers.

@@ -1,20 +1,7 @@
-import {
-  BUTTERWORTH_Q,
-  filterInPlace,
-  highPassBiquad,
-  lowPassBiquad,
-} from "./biquad.ts";
-import type { Biquad } from "./biquad.ts";
-import {
-  FAST_NORMALISATION_SECONDS,
-  filteredEnvelope,
-  normalisedEnvelope,
-} from "./envelope.ts";
-import {
-  LONG_HALF_BAND_PAIRS,
-  SHORT_HALF_BAND_PAIRS,
-  decimateByTwo,
-} from "./halfBand.ts";
+import { BUTTERWORTH_Q, filterInPlace, highPassBiquad, lowPassBiquad } from './biquad.ts';
+import type { Biquad } from './biquad.ts';
+import { FAST_NORMALISATION_SECONDS, filteredEnvelope, normalisedEnvelope } from './envelope.ts';
+import { LONG_HALF_BAND_PAIRS, SHORT_HALF_BAND_PAIRS, decimateByTwo } from './halfBand.ts';
 
 /** A signal together with its rate. */
 export interface SampledSignal {
@@ -54,37 +41,23 @@ const FOURTH_ORDER_Q = [0.5412, 1.3066] as const;
  * Reference: envelope analysis as in R. Randall & J. Antoni (2011), Rolling element bearing diagnostics – a
  * tutorial, MSSP 25(2), section 4; rectified instead of squared.
  */
-export function createFrontEnd(
-  samples: Float32Array,
-  sampleRateHz: number,
-): FrontEnd {
+export function createFrontEnd(samples: Float32Array, sampleRateHz: number): FrontEnd {
   const waveform = lowRateWaveform(samples, sampleRateHz);
   const nyquistHz = waveform.sampleRateHz / 2;
   const bands = [
     bandEnvelope(waveform, LOW_BAND_HZ, MIDDLE_BAND_HZ),
-    bandEnvelope(
-      waveform,
-      MIDDLE_BAND_HZ,
-      Math.min(HIGH_BAND_HZ, 0.9 * nyquistHz),
-    ),
+    bandEnvelope(waveform, MIDDLE_BAND_HZ, Math.min(HIGH_BAND_HZ, 0.9 * nyquistHz)),
   ];
-  if (sampleRateHz / 2 > LEAST_NYQUIST_FOR_HIGH_BAND_HZ)
-    bands.push(highBandEnvelope(samples, sampleRateHz, bands[0]));
+  if (sampleRateHz / 2 > LEAST_NYQUIST_FOR_HIGH_BAND_HZ) bands.push(highBandEnvelope(samples, sampleRateHz, bands[0]));
   return { waveform, envelopes: bands };
 }
 
-function lowRateWaveform(
-  samples: Float32Array,
-  sampleRateHz: number,
-): SampledSignal {
+function lowRateWaveform(samples: Float32Array, sampleRateHz: number): SampledSignal {
   let rate = sampleRateHz;
   let current = samples;
   while (rate > HIGHEST_WAVEFORM_RATE_HZ) {
     const isLast = rate / 2 <= HIGHEST_WAVEFORM_RATE_HZ;
-    current = decimateByTwo(
-      current,
-      isLast ? LONG_HALF_BAND_PAIRS : SHORT_HALF_BAND_PAIRS,
-    );
+    current = decimateByTwo(current, isLast ? LONG_HALF_BAND_PAIRS : SHORT_HALF_BAND_PAIRS);
     rate /= 2;
   }
   const rumble = highPassBiquad({
@@ -93,18 +66,12 @@ function lowRateWaveform(
     quality: BUTTERWORTH_Q,
   });
   return {
-    samples: filterInPlace(current === samples ? current.slice() : current, [
-      rumble,
-    ]),
+    samples: filterInPlace(current === samples ? current.slice() : current, [rumble]),
     sampleRateHz: rate,
   };
 }
 
-function bandEnvelope(
-  waveform: SampledSignal,
-  lowHz: number,
-  highHz: number,
-): SampledSignal {
+function bandEnvelope(waveform: SampledSignal, lowHz: number, highHz: number): SampledSignal {
   const { sampleRateHz } = waveform;
   const sections = [
     highPassBiquad({
@@ -118,12 +85,7 @@ function bandEnvelope(
       quality: BUTTERWORTH_Q,
     }),
   ];
-  return envelopeOf(
-    waveform.samples,
-    sampleRateHz,
-    sections,
-    Math.max(1, Math.round(sampleRateHz / ENVELOPE_RATE_HZ)),
-  );
+  return envelopeOf(waveform.samples, sampleRateHz, sections, Math.max(1, Math.round(sampleRateHz / ENVELOPE_RATE_HZ)));
 }
 
 function highBandEnvelope(
@@ -135,12 +97,7 @@ function highBandEnvelope(
     highPassBiquad({ frequencyHz: HIGH_BAND_HZ, sampleRateHz, quality }),
   );
   const rateHz = sibling?.sampleRateHz ?? ENVELOPE_RATE_HZ;
-  return envelopeOf(
-    samples,
-    sampleRateHz,
-    sections,
-    Math.round(sampleRateHz / rateHz),
-  );
+  return envelopeOf(samples, sampleRateHz, sections, Math.round(sampleRateHz / rateHz));
 }
 
 function envelopeOf(
@@ -152,11 +109,7 @@ function envelopeOf(
   const envelopeRateHz = sampleRateHz / factor;
   const envelope = filteredEnvelope(samples, sections, factor);
   return {
-    samples: normalisedEnvelope(
-      envelope,
-      envelopeRateHz,
-      FAST_NORMALISATION_SECONDS,
-    ),
+    samples: normalisedEnvelope(envelope, envelopeRateHz, FAST_NORMALISATION_SECONDS),
     sampleRateHz: envelopeRateHz,
   };
 }

@@ -1,6 +1,6 @@
-import type { EventPhase } from "./eventTrack.ts";
-import type { SampledSignal } from "./frontEnd.ts";
-import { resampleByPhase } from "./resampleByPhase.ts";
+import type { EventPhase } from './eventTrack.ts';
+import type { SampledSignal } from './frontEnd.ts';
+import { resampleByPhase } from './resampleByPhase.ts';
 
 /** Complex amplitude of one harmonic of the event rate in consecutive blocks of whole events. */
 export interface LineBlocks {
@@ -31,31 +31,20 @@ export function demodulateLines(
   grid: BlockGrid,
   options: { readonly harmonics: readonly number[]; readonly medianHz: number },
 ): LineBlocks[] {
-  const perBlock = Math.max(
-    4,
-    Math.ceil((grid.cyclesPerBlock * signal.sampleRateHz) / options.medianHz),
-  );
+  const perBlock = Math.max(4, Math.ceil((grid.cyclesPerBlock * signal.sampleRateHz) / options.medianHz));
   const resampled = resampleByPhase(signal, phase, {
     firstCycle: grid.firstCycle,
     cyclesPerSample: grid.cyclesPerBlock / perBlock,
     sampleCount: perBlock * grid.blockCount,
   });
-  return options.harmonics.map((harmonic) =>
-    demodulateLine(resampled, perBlock, grid, harmonic),
-  );
+  return options.harmonics.map((harmonic) => demodulateLine(resampled, perBlock, grid, harmonic));
 }
 
-function demodulateLine(
-  resampled: Float32Array,
-  perBlock: number,
-  grid: BlockGrid,
-  harmonic: number,
-): LineBlocks {
+function demodulateLine(resampled: Float32Array, perBlock: number, grid: BlockGrid, harmonic: number): LineBlocks {
   const cosine = new Float64Array(perBlock);
   const sine = new Float64Array(perBlock);
   for (let sample = 0; sample < perBlock; sample++) {
-    const angle =
-      (2 * Math.PI * harmonic * grid.cyclesPerBlock * sample) / perBlock;
+    const angle = (2 * Math.PI * harmonic * grid.cyclesPerBlock * sample) / perBlock;
     cosine[sample] = Math.cos(angle) / perBlock;
     sine[sample] = Math.sin(angle) / perBlock;
   }
@@ -91,14 +80,11 @@ export function blockCoherence({ real, imaginary }: LineBlocks): number {
     sumImaginary += b * c - a * d;
     power += (a * a + b * b + c * c + d * d) / 2;
   }
-  const chance = Math.min(
-    LARGEST_CHANCE,
-    CHANCE_COHERENCE / Math.sqrt(Math.max(1, real.length - 1)),
-  );
+  const chance = Math.min(LARGEST_CHANCE, CHANCE_COHERENCE / Math.sqrt(Math.max(1, real.length - 1)));
   return Math.max(0, Math.hypot(sumReal, sumImaginary) / power - chance);
 }
 
 /** Coherence of n blocks of noise stays below this over √n in all but 1 % of cases. */
 const CHANCE_COHERENCE = 2.2;
 /** With a handful of blocks chance could explain everything; the lines are then judged together, not one by one. */
-const LARGEST_CHANCE = 0.4;
+const LARGEST_CHANCE = 0.6;

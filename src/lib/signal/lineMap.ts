@@ -1,10 +1,10 @@
-import { createCellPooling, pooledLevel } from "./cellPooling.ts";
-import type { CellPooling } from "./cellPooling.ts";
-import { fftPlan } from "./fftPlan.ts";
-import type { SampledSignal } from "./frontEnd.ts";
-import { cellOfHertz } from "./logGrid.ts";
-import { subtractNoiseFloor } from "./noiseFloor.ts";
-import { hannWindow } from "./window.ts";
+import { createCellPooling, pooledLevel } from './cellPooling.ts';
+import type { CellPooling } from './cellPooling.ts';
+import { fftPlan } from './fftPlan.ts';
+import type { SampledSignal } from './frontEnd.ts';
+import { cellOfHertz } from './logGrid.ts';
+import { subtractNoiseFloor } from './noiseFloor.ts';
+import { hannWindow } from './window.ts';
 
 /** Distance of the frames of a line map. */
 export const FRAME_SECONDS = 0.1;
@@ -65,43 +65,24 @@ export function addLines(map: LineMap, source: LineSource): void {
     const centreSeconds = ((frame + end) / 2) * FRAME_SECONDS;
     row.fill(0);
     for (const each of source.signals) {
-      const levels = subtractNoiseFloor(
-        logSpectrumAt(each, source.size, centreSeconds),
-        source.floorReachBins,
-      );
+      const levels = subtractNoiseFloor(logSpectrumAt(each, source.size, centreSeconds), source.floorReachBins);
       keepStrongest(row, levels, pooling, source.gain);
     }
-    for (let target = frame; target < end; target++)
-      addRow(map, target, pooling.firstCell, row);
+    for (let target = frame; target < end; target++) addRow(map, target, pooling.firstCell, row);
   }
 }
 
-function keepStrongest(
-  row: Float32Array,
-  levels: Float32Array,
-  pooling: CellPooling,
-  gain: number,
-): void {
+function keepStrongest(row: Float32Array, levels: Float32Array, pooling: CellPooling, gain: number): void {
   for (let index = 0; index < row.length; index++) {
-    const level =
-      gain *
-      (pooledLevel(pooling, levels, index) -
-        (pooling.threshold[index] as number));
-    if (level > (row[index] as number))
-      row[index] = Math.min(STRONGEST_NEPERS, level);
+    const level = gain * (pooledLevel(pooling, levels, index) - (pooling.threshold[index] as number));
+    if (level > (row[index] as number)) row[index] = Math.min(STRONGEST_NEPERS, level);
   }
 }
 
-function addRow(
-  map: LineMap,
-  frame: number,
-  firstCell: number,
-  row: Float32Array,
-): void {
+function addRow(map: LineMap, frame: number, firstCell: number, row: Float32Array): void {
   const start = frame * map.cellCount + firstCell;
   for (let index = 0; index < row.length; index++) {
-    map.strengths[start + index] =
-      (map.strengths[start + index] as number) + (row[index] as number);
+    map.strengths[start + index] = (map.strengths[start + index] as number) + (row[index] as number);
   }
 }
 
@@ -109,11 +90,7 @@ function addRow(
  * Log power spectrum of a Hann-windowed stretch; near the ends of the signal the stretch is moved inside, and a
  * signal shorter than the transform is windowed over its real length.
  */
-function logSpectrumAt(
-  { samples, sampleRateHz }: SampledSignal,
-  size: number,
-  centreSeconds: number,
-): Float32Array {
+function logSpectrumAt({ samples, sampleRateHz }: SampledSignal, size: number, centreSeconds: number): Float32Array {
   const plan = fftPlan(size);
   const length = Math.min(size, samples.length);
   const window = hannWindow(length);
@@ -121,17 +98,14 @@ function logSpectrumAt(
   const start = Math.max(0, Math.min(samples.length - length, wanted));
   if (length < size) plan.input.fill(0, length);
   for (let sample = 0; sample < length; sample++) {
-    plan.input[sample] =
-      (samples[start + sample] as number) * (window[sample] as number);
+    plan.input[sample] = (samples[start + sample] as number) * (window[sample] as number);
   }
   const spectrum = plan.transformReal();
   const logPower = new Float32Array(size / 2 + 1);
   for (let bin = 0; bin < logPower.length; bin++) {
     const real = spectrum[2 * bin] as number;
     const imaginary = spectrum[2 * bin + 1] as number;
-    logPower[bin] = Math.log(
-      real * real + imaginary * imaginary + Number.MIN_VALUE,
-    );
+    logPower[bin] = Math.log(real * real + imaginary * imaginary + Number.MIN_VALUE);
   }
   return logPower;
 }

@@ -1,10 +1,10 @@
-import type { FrontEnd, SampledSignal } from "./frontEnd.ts";
-import { WAVEFORM_USABLE_FRACTION } from "./frontEnd.ts";
-import { decimateByTwo, LONG_HALF_BAND_PAIRS } from "./halfBand.ts";
-import { addLines, createLineMap, FRAME_SECONDS } from "./lineMap.ts";
-import type { LineMap } from "./lineMap.ts";
-import { cellOfHertz } from "./logGrid.ts";
-import { normalisedEnvelope, SLOW_NORMALISATION_SECONDS } from "./envelope.ts";
+import type { FrontEnd, SampledSignal } from './frontEnd.ts';
+import { WAVEFORM_USABLE_FRACTION } from './frontEnd.ts';
+import { decimateByTwo, LONG_HALF_BAND_PAIRS } from './halfBand.ts';
+import { addLines, createLineMap, FRAME_SECONDS } from './lineMap.ts';
+import type { LineMap } from './lineMap.ts';
+import { cellOfHertz } from './logGrid.ts';
+import { normalisedEnvelope, SLOW_NORMALISATION_SECONDS } from './envelope.ts';
 
 /** The two views of a recording: lines of the sound itself and lines of its loudness. */
 export interface LineMaps {
@@ -43,24 +43,12 @@ export function createLineMaps(
 ): LineMaps {
   const durationSeconds = recording.samples.length / recording.sampleRateHz;
   const frameCount = Math.max(1, Math.floor(durationSeconds / FRAME_SECONDS));
-  const highestHz = Math.min(
-    HIGHEST_CELL_HZ,
-    HIGHEST_CELL_FRACTION * recording.sampleRateHz,
-  );
+  const highestHz = Math.min(HIGHEST_CELL_HZ, HIGHEST_CELL_FRACTION * recording.sampleRateHz);
   const cellCount = cellOfHertz(highestHz);
   const waveform = createLineMap(frameCount, cellCount);
   const envelope = createLineMap(frameCount, cellCount);
-  addWaveformLines(
-    waveform,
-    frontEnd.waveform,
-    recording,
-    options.highestEventHz,
-  );
-  addEnvelopeLines(
-    envelope,
-    mergedEnvelopes(frontEnd.envelopes),
-    options.lowestEventHz,
-  );
+  addWaveformLines(waveform, frontEnd.waveform, recording, options.highestEventHz);
+  addEnvelopeLines(envelope, mergedEnvelopes(frontEnd.envelopes), options.lowestEventHz);
   return { waveform, envelope };
 }
 
@@ -111,11 +99,7 @@ function addWaveformLines(
   });
 }
 
-function addEnvelopeLines(
-  map: LineMap,
-  envelopes: readonly SampledSignal[],
-  lowestEventHz: number,
-): void {
+function addEnvelopeLines(map: LineMap, envelopes: readonly SampledSignal[], lowestEventHz: number): void {
   const rateHz = envelopes[0]?.sampleRateHz ?? 1;
   for (const [size, hopFrames, floorReachBins, gain] of [
     [1024, 1, 16, 0.7],
@@ -139,9 +123,7 @@ function addEnvelopeLines(
     [8192, 12, 8],
   ] as const) {
     const lowestHz = (LEAST_SLOW_PERIODS * slowRateHz) / size;
-    const isUsed =
-      size === 512 ||
-      lowestEventHz < 2 * ((LEAST_SLOW_PERIODS * slowRateHz * 4) / size);
+    const isUsed = size === 512 || lowestEventHz < 2 * ((LEAST_SLOW_PERIODS * slowRateHz * 4) / size);
     if (isUsed)
       addLines(map, {
         signals: slow,
@@ -159,18 +141,12 @@ function addEnvelopeLines(
 function mergedEnvelopes(envelopes: readonly SampledSignal[]): SampledSignal[] {
   const [low, middle, high] = envelopes;
   if (!low || !middle) return [...envelopes];
-  const samples = low.samples.map(
-    (value, sample) => (value + (middle.samples[sample] ?? 0)) / 2,
-  );
-  return high
-    ? [{ samples, sampleRateHz: low.sampleRateHz }, high]
-    : [{ samples, sampleRateHz: low.sampleRateHz }];
+  const samples = low.samples.map((value, sample) => (value + (middle.samples[sample] ?? 0)) / 2);
+  return high ? [{ samples, sampleRateHz: low.sampleRateHz }, high] : [{ samples, sampleRateHz: low.sampleRateHz }];
 }
 
 function slowEnvelope({ samples, sampleRateHz }: SampledSignal): SampledSignal {
-  const slow = new Float32Array(
-    Math.floor(samples.length / SLOW_ENVELOPE_FACTOR),
-  );
+  const slow = new Float32Array(Math.floor(samples.length / SLOW_ENVELOPE_FACTOR));
   for (let block = 0; block < slow.length; block++) {
     let sum = 0;
     for (let inside = 0; inside < SLOW_ENVELOPE_FACTOR; inside++)

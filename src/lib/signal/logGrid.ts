@@ -11,10 +11,7 @@ export function hertzOfCell(cell: number): number {
 
 /** The cell nearest to a frequency, clamped to ≥ 0. @example cellOfHertz(0.4) // 120 */
 export function cellOfHertz(frequencyHz: number): number {
-  return Math.max(
-    0,
-    Math.round(CELLS_PER_OCTAVE * Math.log2(frequencyHz / LOWEST_CELL_HZ)),
-  );
+  return Math.max(0, Math.round(CELLS_PER_OCTAVE * Math.log2(frequencyHz / LOWEST_CELL_HZ)));
 }
 
 /** Whole cells between a frequency and its multiple by `ratio`. @example cellShift(2) // 120 */

@@ -1,8 +1,8 @@
-import { averageSpectrum } from "./averageSpectrum.ts";
-import type { SampledSignal } from "./frontEnd.ts";
-import type { LineMap } from "./lineMap.ts";
-import { cellOfHertz } from "./logGrid.ts";
-import { subtractNoiseFloor } from "./noiseFloor.ts";
+import { averageSpectrum } from './averageSpectrum.ts';
+import type { SampledSignal } from './frontEnd.ts';
+import type { LineMap } from './lineMap.ts';
+import { cellOfHertz } from './logGrid.ts';
+import { subtractNoiseFloor } from './noiseFloor.ts';
 
 /** Hum of the mains that is heard in a recording. */
 export interface MainsHum {
@@ -36,77 +36,38 @@ const LOOK_BINS = 1.5;
  * Reference: EN 50160 (2010), 4.2.1, on the mains frequency.
  */
 export function detectMainsHum(waveform: SampledSignal): MainsHum | null {
-  const { power, binHz } = averageSpectrum(
-    waveform.samples,
-    waveform.sampleRateHz,
-    SPECTRUM_SIZE,
-    MOST_SEGMENTS,
-  );
+  const { power, binHz } = averageSpectrum(waveform.samples, waveform.sampleRateHz, SPECTRUM_SIZE, MOST_SEGMENTS);
   const levels = subtractNoiseFloor(
     Float32Array.from(power, (value) => Math.log(value + Number.MIN_VALUE)),
     FLOOR_REACH_BINS,
   );
-  const reach =
-    LOOK_BINS * Math.max(1, SPECTRUM_SIZE / waveform.samples.length);
+  const reach = LOOK_BINS * Math.max(1, SPECTRUM_SIZE / waveform.samples.length);
   let best: (MainsHum & { score: number }) | null = null;
   for (const nominalHz of NOMINAL_MAINS_HZ) {
-    for (
-      let deviation = -LARGEST_DEVIATION;
-      deviation <= LARGEST_DEVIATION;
-      deviation += DEVIATION_STEP
-    ) {
-      const candidate = mainsComb(
-        levels,
-        nominalHz * (1 + deviation),
-        binHz,
-        reach,
-      );
-      if (
-        candidate.harmonics.length >= FEWEST_HARMONICS &&
-        candidate.score > (best?.score ?? LEAST_SCORE)
-      )
+    for (let deviation = -LARGEST_DEVIATION; deviation <= LARGEST_DEVIATION; deviation += DEVIATION_STEP) {
+      const candidate = mainsComb(levels, nominalHz * (1 + deviation), binHz, reach);
+      if (candidate.harmonics.length >= FEWEST_HARMONICS && candidate.score > (best?.score ?? LEAST_SCORE))
         best = candidate;
     }
   }
-  return best &&
-    countOtherLines(levels, best, binHz, reach) <=
-      MOST_OTHER_LINES * best.harmonics.length
-    ? best
-    : null;
+  return best && countOtherLines(levels, best, binHz, reach) <= MOST_OTHER_LINES * best.harmonics.length ? best : null;
 }
 
 /** Lines off the mains grid, for each one on it, up to which the grid's lines are hum and no part of a denser comb. */
 const MOST_OTHER_LINES = 3;
 
-function countOtherLines(
-  levels: Float32Array,
-  hum: MainsHum,
-  binHz: number,
-  reach: number,
-): number {
+function countOtherLines(levels: Float32Array, hum: MainsHum, binHz: number, reach: number): number {
   let count = 0;
   const separation = Math.ceil(2 * reach);
-  for (
-    let bin = Math.ceil(hum.mainsHz / binHz / 2);
-    bin * binHz < MOST_HARMONICS * hum.mainsHz;
-    bin++
-  ) {
-    const isLine =
-      (levels[bin] as number) > LINE_NEPERS &&
-      highestNear(levels, bin, separation) === levels[bin];
+  for (let bin = Math.ceil(hum.mainsHz / binHz / 2); bin * binHz < MOST_HARMONICS * hum.mainsHz; bin++) {
+    const isLine = (levels[bin] as number) > LINE_NEPERS && highestNear(levels, bin, separation) === levels[bin];
     const multiple = Math.round((bin * binHz) / hum.mainsHz);
-    if (isLine && Math.abs(bin - (multiple * hum.mainsHz) / binHz) > separation)
-      count++;
+    if (isLine && Math.abs(bin - (multiple * hum.mainsHz) / binHz) > separation) count++;
   }
   return count;
 }
 
-function mainsComb(
-  levels: Float32Array,
-  mainsHz: number,
-  binHz: number,
-  reach: number,
-): MainsHum & { score: number } {
+function mainsComb(levels: Float32Array, mainsHz: number, binHz: number, reach: number): MainsHum & { score: number } {
   const harmonics: number[] = [];
   let score = 0;
   for (let harmonic = 1; harmonic <= MOST_HARMONICS; harmonic++) {
@@ -121,17 +82,9 @@ function mainsComb(
   return { mainsHz, harmonics, score };
 }
 
-function highestNear(
-  levels: Float32Array,
-  centre: number,
-  reach: number,
-): number {
+function highestNear(levels: Float32Array, centre: number, reach: number): number {
   let highest = -Infinity;
-  for (
-    let bin = Math.ceil(centre - reach);
-    bin <= Math.floor(centre + reach);
-    bin++
-  ) {
+  for (let bin = Math.ceil(centre - reach); bin <= Math.floor(centre + reach); bin++) {
     highest = Math.max(highest, levels[bin] ?? -Infinity);
   }
   return highest;
@@ -144,30 +97,17 @@ const REMAINING_FRACTION = 0.15;
 export function weakenMainsHum(map: LineMap, hum: MainsHum): void {
   for (let harmonic = 1; harmonic <= MOST_HARMONICS; harmonic++) {
     const centre = cellOfHertz(harmonic * hum.mainsHz);
-    for (
-      let cell = centre - 1;
-      cell <= Math.min(map.cellCount - 1, centre + 1);
-      cell++
-    ) {
+    for (let cell = centre - 1; cell <= Math.min(map.cellCount - 1, centre + 1); cell++) {
       for (let frame = 0; frame < map.frameCount; frame++) {
         const index = frame * map.cellCount + cell;
-        map.strengths[index] =
-          REMAINING_FRACTION * (map.strengths[index] as number);
+        map.strengths[index] = REMAINING_FRACTION * (map.strengths[index] as number);
       }
     }
   }
 }
 
 /** Whether a frequency lies on a multiple of the mains, within what the grid's steadiness allows. */
-export function isMainsMultiple(
-  hum: MainsHum,
-  frequencyHz: number,
-  toleranceHz: number,
-): boolean {
+export function isMainsMultiple(hum: MainsHum, frequencyHz: number, toleranceHz: number): boolean {
   const harmonic = Math.round(frequencyHz / hum.mainsHz);
-  return (
-    harmonic >= 1 &&
-    Math.abs(frequencyHz - harmonic * hum.mainsHz) <=
-      toleranceHz + frequencyHz * DEVIATION_STEP
-  );
+  return harmonic >= 1 && Math.abs(frequencyHz - harmonic * hum.mainsHz) <= toleranceHz + frequencyHz * DEVIATION_STEP;
 }

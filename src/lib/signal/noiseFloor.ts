@@ -13,32 +13,21 @@ const CLIPPING_NEPERS = 0.7;
  * References: a clipped-mean detector in the manner of H. Finn & R. Johnson (1968), Adaptive detection mode with
  * threshold control, RCA Review 29, in the log domain.
  */
-export function subtractNoiseFloor(
-  logPower: Float32Array,
-  halfWidthBins: number,
-): Float32Array {
+export function subtractNoiseFloor(logPower: Float32Array, halfWidthBins: number): Float32Array {
   const clipped = Float32Array.from(logPower);
   const floor = new Float32Array(logPower.length);
   slidingMean(logPower, halfWidthBins, floor);
   for (let round = 0; round < CLIPPING_ROUNDS; round++) {
     for (let bin = 0; bin < clipped.length; bin++) {
-      clipped[bin] = Math.min(
-        logPower[bin] as number,
-        (floor[bin] as number) + CLIPPING_NEPERS,
-      );
+      clipped[bin] = Math.min(logPower[bin] as number, (floor[bin] as number) + CLIPPING_NEPERS);
     }
     slidingMean(clipped, halfWidthBins, floor);
   }
-  for (let bin = 0; bin < logPower.length; bin++)
-    logPower[bin] = (logPower[bin] as number) - (floor[bin] as number);
+  for (let bin = 0; bin < logPower.length; bin++) logPower[bin] = (logPower[bin] as number) - (floor[bin] as number);
   return logPower;
 }
 
-function slidingMean(
-  values: Float32Array,
-  halfWidth: number,
-  means: Float32Array,
-): void {
+function slidingMean(values: Float32Array, halfWidth: number, means: Float32Array): void {
   let sum = 0;
   let first = 0;
   let end = 0;

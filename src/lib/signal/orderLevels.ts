@@ -1,11 +1,11 @@
-import { median } from "#lib/statistics/quantiles.ts";
-import { averageSpectrum } from "./averageSpectrum.ts";
-import { cyclesAt, longestActiveStretch } from "./eventTrack.ts";
-import type { EventPhase } from "./eventTrack.ts";
-import type { FrontEnd, SampledSignal } from "./frontEnd.ts";
-import { WAVEFORM_USABLE_FRACTION } from "./frontEnd.ts";
-import { subtractNoiseFloor } from "./noiseFloor.ts";
-import { resampleByPhase } from "./resampleByPhase.ts";
+import { median } from '#lib/statistics/quantiles.ts';
+import { averageSpectrum } from './averageSpectrum.ts';
+import { cyclesAt, longestActiveStretch } from './eventTrack.ts';
+import type { EventPhase } from './eventTrack.ts';
+import type { FrontEnd, SampledSignal } from './frontEnd.ts';
+import { WAVEFORM_USABLE_FRACTION } from './frontEnd.ts';
+import { subtractNoiseFloor } from './noiseFloor.ts';
+import { resampleByPhase } from './resampleByPhase.ts';
 
 /** Levels of lines over the order, in multiples of the tracked event rate. */
 export interface OrderLevels {
@@ -42,16 +42,9 @@ const HIGHEST_ENVELOPE_HZ = 1250;
  * @param phase refined phase; only the longest stretch in which events are heard is used
  * Reference: K. Fyfe & E. Munck (1997), Analysis of computed order tracking, MSSP 11(2).
  */
-export function orderSpectra(
-  frontEnd: FrontEnd,
-  phase: EventPhase,
-): OrderSpectra {
-  const { startSeconds, endSeconds, firstKnot, endKnot } = longestActiveStretch(
-    phase.track,
-  );
-  const medianHz = median(
-    phase.track.eventHz.subarray(firstKnot, Math.max(firstKnot + 1, endKnot)),
-  );
+export function orderSpectra(frontEnd: FrontEnd, phase: EventPhase): OrderSpectra {
+  const { startSeconds, endSeconds, firstKnot, endKnot } = longestActiveStretch(phase.track);
+  const medianHz = median(phase.track.eventHz.subarray(firstKnot, Math.max(firstKnot + 1, endKnot)));
   const stretch = { startSeconds, endSeconds, medianHz };
   const waveform = orderLevels([frontEnd.waveform], phase, stretch, {
     size: WAVEFORM_SIZE,
@@ -90,14 +83,10 @@ function orderLevels(
   const rateHz = signals[0]?.sampleRateHz ?? 1;
   const cyclesPerSample = stretch.medianHz / rateHz;
   const longestSeconds = (MOST_WINDOWS * options.size) / rateHz;
-  const surplus =
-    Math.max(0, stretch.endSeconds - stretch.startSeconds - longestSeconds) / 2;
+  const surplus = Math.max(0, stretch.endSeconds - stretch.startSeconds - longestSeconds) / 2;
   const firstCycle = cyclesAt(phase, stretch.startSeconds + surplus);
   const endCycle = cyclesAt(phase, stretch.endSeconds - surplus);
-  const sampleCount = Math.max(
-    2,
-    Math.floor((endCycle - firstCycle) / cyclesPerSample),
-  );
+  const sampleCount = Math.max(2, Math.floor((endCycle - firstCycle) / cyclesPerSample));
   const levels = new Float32Array(options.size / 2 + 1).fill(-Infinity);
   for (const signal of signals) {
     const resampled = resampleByPhase(signal, phase, {
@@ -110,18 +99,14 @@ function orderLevels(
       Float32Array.from(power, (value) => Math.log(value + Number.MIN_VALUE)),
       options.floorReachBins,
     );
-    for (let bin = 0; bin < levels.length; bin++)
-      levels[bin] = Math.max(levels[bin] as number, own[bin] as number);
+    for (let bin = 0; bin < levels.length; bin++) levels[bin] = Math.max(levels[bin] as number, own[bin] as number);
   }
   return {
     levels,
     ordersPerBin: 1 / (options.size * cyclesPerSample),
     resolutionBins: Math.max(1, options.size / sampleCount),
     lowestOrder: options.lowestHz / stretch.medianHz,
-    highestOrder: Math.min(
-      options.highestHz / stretch.medianHz,
-      0.45 / cyclesPerSample,
-    ),
+    highestOrder: Math.min(options.highestHz / stretch.medianHz, 0.45 / cyclesPerSample),
   };
 }
 
@@ -140,8 +125,7 @@ const STRONGEST_NEPERS = 10;
  * @returns [0, 10]; 0 where there is no line, NaN outside the orders that the signal carries
  */
 export function lineLevel(spectrum: OrderLevels, order: number): number {
-  if (order < spectrum.lowestOrder || order > spectrum.highestOrder)
-    return Number.NaN;
+  if (order < spectrum.lowestOrder || order > spectrum.highestOrder) return Number.NaN;
   const centre = order / spectrum.ordersPerBin;
   const reach = Math.max(LOOK_BINS, LOOK_FRACTION * centre);
   let highest = -Infinity;
@@ -150,8 +134,7 @@ export function lineLevel(spectrum: OrderLevels, order: number): number {
     bin <= Math.min(spectrum.levels.length - 1, Math.floor(centre + reach));
     bin++
   ) {
-    if ((spectrum.levels[bin] as number) > highest)
-      highest = spectrum.levels[bin] as number;
+    if ((spectrum.levels[bin] as number) > highest) highest = spectrum.levels[bin] as number;
   }
   return Math.max(0, Math.min(STRONGEST_NEPERS, highest - NOISE_NEPERS));
 }
@@ -176,33 +159,20 @@ export function orderPeaks(
   const reach = Math.ceil(2 * spectrum.resolutionBins);
   const peaks: OrderPeak[] = [];
   const first = Math.ceil(spectrum.lowestOrder / ordersPerBin);
-  const last = Math.min(
-    levels.length - 1,
-    Math.floor(spectrum.highestOrder / ordersPerBin),
-  );
+  const last = Math.min(levels.length - 1, Math.floor(spectrum.highestOrder / ordersPerBin));
   for (let bin = first; bin <= last; bin++) {
     const level = levels[bin] as number;
-    if (level < options.leastLevel || !isHighestNear(levels, bin, reach))
-      continue;
+    if (level < options.leastLevel || !isHighestNear(levels, bin, reach)) continue;
     peaks.push({ order: bin * ordersPerBin, level });
   }
   return peaks.sort((a, b) => b.level - a.level).slice(0, options.most);
 }
 
-function isHighestNear(
-  levels: Float32Array,
-  bin: number,
-  reach: number,
-): boolean {
+function isHighestNear(levels: Float32Array, bin: number, reach: number): boolean {
   const level = levels[bin] as number;
-  for (
-    let other = Math.max(0, bin - reach);
-    other <= Math.min(levels.length - 1, bin + reach);
-    other++
-  ) {
+  for (let other = Math.max(0, bin - reach); other <= Math.min(levels.length - 1, bin + reach); other++) {
     const otherLevel = levels[other] as number;
-    if (otherLevel > level || (otherLevel === level && other < bin))
-      return false;
+    if (otherLevel > level || (otherLevel === level && other < bin)) return false;
   }
   return true;
 }

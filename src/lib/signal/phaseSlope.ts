@@ -1,6 +1,6 @@
-import { linearRegression } from "#lib/statistics/linearRegression.ts";
-import { createSecondsAt } from "./eventTrack.ts";
-import type { RefinedTrack, WeightedLine } from "./refineTrack.ts";
+import { linearRegression } from '#lib/statistics/linearRegression.ts';
+import { createSecondsAt } from './eventTrack.ts';
+import type { RefinedTrack, WeightedLine } from './refineTrack.ts';
 
 /** The event rate over a stretch as the slope of its phase. */
 export interface PhaseSlope {
@@ -33,32 +33,17 @@ const OVERLAP_VARIANCE = 1.5;
  * References: S. Tretter (1985), Estimating the frequency of a noisy sinusoid by linear regression, IEEE Trans. IT-31;
  * D. Rife & R. Boorstyn (1974), Single-tone parameter estimation from discrete-time observations, IEEE Trans. IT-20.
  */
-export function phaseSlope(
-  refined: RefinedTrack,
-  firstBlock: number,
-  endBlock: number,
-): PhaseSlope | null {
+export function phaseSlope(refined: RefinedTrack, firstBlock: number, endBlock: number): PhaseSlope | null {
   const { grid, phase, lines } = refined;
   const secondsAt = createSecondsAt(phase);
-  const startSeconds = secondsAt(
-    grid.firstCycle + firstBlock * grid.cyclesPerBlock,
-  );
-  const durationSeconds =
-    secondsAt(grid.firstCycle + endBlock * grid.cyclesPerBlock) - startSeconds;
-  const meanHz =
-    ((endBlock - firstBlock) * grid.cyclesPerBlock) / durationSeconds;
-  const segmentSeconds = Math.max(
-    SHORTEST_SEGMENT_SECONDS,
-    LEAST_SEGMENT_EVENTS / meanHz,
-  );
-  const wanted = Math.max(
-    FEWEST_SEGMENTS,
-    Math.min(MOST_SEGMENTS, durationSeconds / segmentSeconds),
-  );
+  const startSeconds = secondsAt(grid.firstCycle + firstBlock * grid.cyclesPerBlock);
+  const durationSeconds = secondsAt(grid.firstCycle + endBlock * grid.cyclesPerBlock) - startSeconds;
+  const meanHz = ((endBlock - firstBlock) * grid.cyclesPerBlock) / durationSeconds;
+  const segmentSeconds = Math.max(SHORTEST_SEGMENT_SECONDS, LEAST_SEGMENT_EVENTS / meanHz);
+  const wanted = Math.max(FEWEST_SEGMENTS, Math.min(MOST_SEGMENTS, durationSeconds / segmentSeconds));
   const hop = Math.max(1, Math.floor((endBlock - firstBlock) / (wanted + 1)));
   const centres: number[] = [];
-  for (let centre = firstBlock + hop; centre + hop <= endBlock; centre += hop)
-    centres.push(centre);
+  for (let centre = firstBlock + hop; centre + hop <= endBlock; centre += hop) centres.push(centre);
   if (centres.length < 3) return null;
   const offsets = combinedOffsets(lines, centres, hop);
   if (!offsets) return null;
@@ -75,9 +60,7 @@ export function phaseSlope(
 function slopeOf(times: Float64Array, phases: Float64Array): PhaseSlope {
   const line = linearRegression(times, phases);
   const noise = noiseVariance(phases) ?? line.residualVariance;
-  const variance =
-    OVERLAP_VARIANCE *
-    Math.min(line.residualVariance, 2 * noise + Number.MIN_VALUE);
+  const variance = OVERLAP_VARIANCE * Math.min(line.residualVariance, 2 * noise + Number.MIN_VALUE);
   return {
     eventHz: line.slope,
     standardErrorHz: Math.sqrt(variance / line.sumOfSquares),
@@ -89,11 +72,7 @@ function slopeOf(times: Float64Array, phases: Float64Array): PhaseSlope {
 function noiseVariance(phases: Float64Array): number | null {
   let sum = 0;
   let count = 0;
-  for (
-    let index = DIFFERENCE_LAG;
-    index + DIFFERENCE_LAG < phases.length;
-    index++
-  ) {
+  for (let index = DIFFERENCE_LAG; index + DIFFERENCE_LAG < phases.length; index++) {
     const difference =
       (phases[index - DIFFERENCE_LAG] as number) -
       2 * (phases[index] as number) +
@@ -105,21 +84,15 @@ function noiseVariance(phases: Float64Array): number | null {
 }
 
 /** Phase of all lines relative to the track, event cycles, shape [centres]; null when no line is usable. */
-function combinedOffsets(
-  lines: readonly WeightedLine[],
-  centres: readonly number[],
-  hop: number,
-): Float64Array | null {
+function combinedOffsets(lines: readonly WeightedLine[], centres: readonly number[], hop: number): Float64Array | null {
   const combined = new Float64Array(centres.length);
   let weights = 0;
   for (const line of lines) {
     const offsets = lineOffsets(line, centres, hop);
     if (!offsets) continue;
-    const variance =
-      (noiseVariance(offsets) ?? 0) + PHASE_RESOLUTION_CYCLES ** 2;
+    const variance = (noiseVariance(offsets) ?? 0) + PHASE_RESOLUTION_CYCLES ** 2;
     for (let index = 0; index < combined.length; index++) {
-      combined[index] =
-        (combined[index] as number) + (offsets[index] as number) / variance;
+      combined[index] = (combined[index] as number) + (offsets[index] as number) / variance;
     }
     weights += 1 / variance;
   }
@@ -130,45 +103,30 @@ function combinedOffsets(
 const PHASE_RESOLUTION_CYCLES = 1e-7;
 
 /** Unwrapped phase of one line at the segments, event cycles about their mean; null for a line that does not hold. */
-function lineOffsets(
-  line: WeightedLine,
-  centres: readonly number[],
-  hop: number,
-): Float64Array | null {
+function lineOffsets(line: WeightedLine, centres: readonly number[], hop: number): Float64Array | null {
   const offsets = new Float64Array(centres.length);
   let [sumReal, sumImaginary, sumAmplitude, previous] = [0, 0, 0, 0];
   for (const [index, centre] of centres.entries()) {
     const { real, imaginary } = segmentAmplitude(line, centre, hop);
     const angle = Math.atan2(imaginary, real) / (2 * Math.PI);
-    const unwrapped =
-      index === 0 ? angle : angle + Math.round(previous - angle);
+    const unwrapped = index === 0 ? angle : angle + Math.round(previous - angle);
     offsets[index] = unwrapped;
     previous = unwrapped;
     sumReal += real;
     sumImaginary += imaginary;
     sumAmplitude += Math.hypot(real, imaginary);
   }
-  if (
-    Math.hypot(sumReal, sumImaginary) < LEAST_AGREEMENT * sumAmplitude ||
-    sumAmplitude === 0
-  )
-    return null;
-  const mean =
-    offsets.reduce((sum, offset) => sum + offset, 0) / offsets.length;
+  if (Math.hypot(sumReal, sumImaginary) < LEAST_AGREEMENT * sumAmplitude || sumAmplitude === 0) return null;
+  const mean = offsets.reduce((sum, offset) => sum + offset, 0) / offsets.length;
   return offsets.map((offset) => (offset - mean) / line.harmonic);
 }
 
 /** Hann-weighted sum of the blocks within ± hop of a centre. */
-function segmentAmplitude(
-  line: WeightedLine,
-  centre: number,
-  hop: number,
-): { real: number; imaginary: number } {
+function segmentAmplitude(line: WeightedLine, centre: number, hop: number): { real: number; imaginary: number } {
   let real = 0;
   let imaginary = 0;
   for (let block = centre - hop; block < centre + hop; block++) {
-    const weight =
-      Math.cos((Math.PI * (block + 0.5 - centre)) / (2 * hop)) ** 2;
+    const weight = Math.cos((Math.PI * (block + 0.5 - centre)) / (2 * hop)) ** 2;
     real += weight * (line.real[block] ?? 0);
     imaginary += weight * (line.imaginary[block] ?? 0);
   }

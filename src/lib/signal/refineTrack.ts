@@ -1,11 +1,11 @@
-import { eventPhase, knotSeconds } from "./eventTrack.ts";
-import type { EventPhase, EventTrack } from "./eventTrack.ts";
-import type { FrontEnd, SampledSignal } from "./frontEnd.ts";
-import { WAVEFORM_USABLE_FRACTION } from "./frontEnd.ts";
-import { smoothestDeviation } from "./smoothestDeviation.ts";
-import { blockCoherence, demodulateLines } from "./lineBlocks.ts";
-import type { BlockGrid, LineBlocks } from "./lineBlocks.ts";
-import { median } from "#lib/statistics/quantiles.ts";
+import { eventPhase, knotSeconds } from './eventTrack.ts';
+import type { EventPhase, EventTrack } from './eventTrack.ts';
+import type { FrontEnd, SampledSignal } from './frontEnd.ts';
+import { WAVEFORM_USABLE_FRACTION } from './frontEnd.ts';
+import { smoothestDeviation } from './smoothestDeviation.ts';
+import { blockCoherence, demodulateLines } from './lineBlocks.ts';
+import type { BlockGrid, LineBlocks } from './lineBlocks.ts';
+import { median } from '#lib/statistics/quantiles.ts';
 
 /** One round of the refinement: how far it looks and how fine. */
 interface Pass {
@@ -64,10 +64,7 @@ export interface RefinedTrack {
  * References: joint harmonic fit as in M. Christensen & A. Jakobsson (2009), Multi-pitch estimation, chapter 2;
  * J. Nielsen et al. (2017), Fast fundamental frequency estimation, Signal Processing 135.
  */
-export function refineTrack(
-  coarse: EventTrack,
-  frontEnd: FrontEnd,
-): RefinedTrack {
+export function refineTrack(coarse: EventTrack, frontEnd: FrontEnd): RefinedTrack {
   let track = coarse;
   for (const pass of PASSES) {
     if (pass === PASSES.at(-1) && relativeRange(track) > STEADY_RANGE) continue;
@@ -78,44 +75,27 @@ export function refineTrack(
   return { track, ...linesAlong(track, frontEnd, PASSES[1]?.span ?? 0) };
 }
 
-function linesAlong(
-  track: EventTrack,
-  frontEnd: FrontEnd,
-  span: number,
-): Omit<RefinedTrack, "track"> {
+function linesAlong(track: EventTrack, frontEnd: FrontEnd, span: number): Omit<RefinedTrack, 'track'> {
   const phase = eventPhase(track);
   const medianHz = median(track.eventHz);
-  const durationSeconds =
-    frontEnd.waveform.samples.length / frontEnd.waveform.sampleRateHz;
-  const blockSeconds = Math.min(
-    LONGEST_BLOCK_SECONDS,
-    LARGEST_BLOCK_TURN / (span * WAVEFORM_HARMONICS * medianHz),
-  );
+  const durationSeconds = frontEnd.waveform.samples.length / frontEnd.waveform.sampleRateHz;
+  const blockSeconds = Math.min(LONGEST_BLOCK_SECONDS, LARGEST_BLOCK_TURN / (span * WAVEFORM_HARMONICS * medianHz));
   const cyclesPerBlock = Math.max(1, Math.floor(blockSeconds * medianHz));
   const endCycle =
     (phase.cyclesAtKnot.at(-1) ?? 0) +
-    (track.eventHz.at(-1) ?? 0) *
-      (durationSeconds - knotSeconds(track.eventHz.length - 1));
+    (track.eventHz.at(-1) ?? 0) * (durationSeconds - knotSeconds(track.eventHz.length - 1));
   const grid = {
     firstCycle: 0,
     cyclesPerBlock,
     blockCount: Math.max(1, Math.floor(endCycle / cyclesPerBlock)),
   };
-  const highestHz = track.eventHz.reduce(
-    (highest, hertz) => Math.max(highest, hertz),
-    0,
-  );
-  const lines = sourcesOf(frontEnd).flatMap(
-    ({ signal, harmonicCount, lowestHz, limitHz }) => {
-      const harmonics = range(harmonicCount).filter(
-        (harmonic) =>
-          harmonic * medianHz > lowestHz && harmonic * highestHz < limitHz,
-      );
-      return harmonics.length > 0
-        ? demodulateLines(signal, phase, grid, { harmonics, medianHz })
-        : [];
-    },
-  );
+  const highestHz = track.eventHz.reduce((highest, hertz) => Math.max(highest, hertz), 0);
+  const lines = sourcesOf(frontEnd).flatMap(({ signal, harmonicCount, lowestHz, limitHz }) => {
+    const harmonics = range(harmonicCount).filter(
+      (harmonic) => harmonic * medianHz > lowestHz && harmonic * highestHz < limitHz,
+    );
+    return harmonics.length > 0 ? demodulateLines(signal, phase, grid, { harmonics, medianHz }) : [];
+  });
   return { phase, grid, lines: strongestLines(lines) };
 }
 
@@ -166,19 +146,14 @@ function corrected(
 ): EventTrack {
   const deviation = smoothestDeviation(lines, {
     ...pass,
-    windowSeconds: Math.max(
-      pass.windowSeconds,
-      LEAST_WINDOW_EVENTS / median(track.eventHz),
-    ),
+    windowSeconds: Math.max(pass.windowSeconds, LEAST_WINDOW_EVENTS / median(track.eventHz)),
     stepSeconds: STEP_SECONDS,
     phase,
     grid,
   });
   return {
     ...track,
-    eventHz: track.eventHz.map(
-      (hertz, knot) => hertz * (1 + deviation(knotSeconds(knot))),
-    ),
+    eventHz: track.eventHz.map((hertz, knot) => hertz * (1 + deviation(knotSeconds(knot)))),
   };
 }
 

@@ -1,6 +1,6 @@
-import { createSecondsAt } from "./eventTrack.ts";
-import type { EventPhase } from "./eventTrack.ts";
-import type { SampledSignal } from "./frontEnd.ts";
+import { createSecondsAt } from './eventTrack.ts';
+import type { EventPhase } from './eventTrack.ts';
+import type { SampledSignal } from './frontEnd.ts';
 
 /**
  * A signal at equal steps of angle instead of time, so that a varying speed becomes constant.
@@ -23,9 +23,7 @@ export function resampleByPhase(
   const secondsAt = createSecondsAt(phase);
   const end = samples.length - 2;
   for (let index = 0; index < output.length; index++) {
-    const position =
-      secondsAt(options.firstCycle + index * options.cyclesPerSample) *
-      sampleRateHz;
+    const position = secondsAt(options.firstCycle + index * options.cyclesPerSample) * sampleRateHz;
     const left = Math.floor(position);
     if (left < 1 || left >= end) continue;
     const part = position - left;
@@ -33,12 +31,7 @@ export function resampleByPhase(
     const here = samples[left] as number;
     const next = samples[left + 1] as number;
     const after = samples[left + 2] as number;
-    const curve =
-      2 * before -
-      5 * here +
-      4 * next -
-      after +
-      part * (3 * (here - next) + after - before);
+    const curve = 2 * before - 5 * here + 4 * next - after + part * (3 * (here - next) + after - before);
     output[index] = here + (part / 2) * (next - before + part * curve);
   }
   return output;

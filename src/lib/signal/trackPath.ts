@@ -1,4 +1,4 @@
-import type { CombScores } from "./combScore.ts";
+import type { CombScores } from './combScore.ts';
 
 /** The most plausible course of the event rate. */
 export interface TrackPath {
@@ -28,10 +28,7 @@ const FROM_SILENCE = -1;
  * References: A. Viterbi (1967), Error bounds for convolutional codes, IEEE Trans. IT-13; linear-time minimum over
  * all moves, P. Felzenszwalb & D. Huttenlocher (2012), Distance transforms of sampled functions, Theory of Computing 8.
  */
-export function trackPath(
-  combs: CombScores,
-  isMasked: ((frame: number, cell: number) => boolean) | null,
-): TrackPath {
+export function trackPath(combs: CombScores, isMasked: ((frame: number, cell: number) => boolean) | null): TrackPath {
   const { frameCount, cellCount, firstCell, scores } = combs;
   const predecessors = new Int16Array(frameCount * cellCount);
   const silencePredecessors = new Int16Array(frameCount).fill(FROM_SILENCE);
@@ -46,9 +43,7 @@ export function trackPath(
     const bestValue = best < 0 ? -Infinity : (values[best] as number);
     const next = new Float64Array(cellCount);
     for (let cell = 0; cell < cellCount; cell++) {
-      const score = isMasked?.(frame, cell)
-        ? 0
-        : (scores[frame * cellCount + cell] as number);
+      const score = isMasked?.(frame, cell) ? 0 : (scores[frame * cellCount + cell] as number);
       next[cell] = (state.reached[cell] as number) + score;
     }
     predecessors.set(state.origin, frame * cellCount);
@@ -60,13 +55,7 @@ export function trackPath(
     }
     values = next;
   }
-  return traceBack(
-    { frameCount, cellCount, firstCell, scores },
-    predecessors,
-    silencePredecessors,
-    values,
-    silence,
-  );
+  return traceBack({ frameCount, cellCount, firstCell, scores }, predecessors, silencePredecessors, values, silence);
 }
 
 /** Best way into every cell from the last frame; returns the best cell of the last frame, or −1. */
@@ -78,8 +67,7 @@ function spread(
   const { reached, origin } = state;
   let best = -1;
   for (let cell = 0; cell < values.length; cell++) {
-    if (best < 0 || (values[cell] as number) > (values[best] as number))
-      best = cell;
+    if (best < 0 || (values[cell] as number) > (values[best] as number)) best = cell;
   }
   const jump = best < 0 ? -Infinity : (values[best] as number) - JUMP_COST;
   const isSilenceBetter = silence - SWITCH_COST >= jump;
@@ -90,19 +78,12 @@ function spread(
     reached[cell] = Math.max(stay, base);
     origin[cell] = stay >= base ? cell : baseOrigin;
   }
-  for (let cell = 1; cell < values.length; cell++)
-    sweep(reached, origin, cell, cell - 1);
-  for (let cell = values.length - 2; cell >= 0; cell--)
-    sweep(reached, origin, cell, cell + 1);
+  for (let cell = 1; cell < values.length; cell++) sweep(reached, origin, cell, cell - 1);
+  for (let cell = values.length - 2; cell >= 0; cell--) sweep(reached, origin, cell, cell + 1);
   return best;
 }
 
-function sweep(
-  reached: Float64Array,
-  origin: Int16Array,
-  cell: number,
-  neighbour: number,
-): void {
+function sweep(reached: Float64Array, origin: Int16Array, cell: number, neighbour: number): void {
   const moved = (reached[neighbour] as number) - COST_PER_CELL;
   if (moved <= (reached[cell] as number)) return;
   reached[cell] = moved;
@@ -151,12 +132,10 @@ export function steadyPath(combs: CombScores): TrackPath {
   const sums = new Float64Array(cellCount);
   for (let frame = 0; frame < frameCount; frame++) {
     for (let cell = 0; cell < cellCount; cell++)
-      sums[cell] =
-        (sums[cell] as number) + (scores[frame * cellCount + cell] as number);
+      sums[cell] = (sums[cell] as number) + (scores[frame * cellCount + cell] as number);
   }
   let best = 0;
-  for (let cell = 1; cell < cellCount; cell++)
-    if ((sums[cell] as number) > (sums[best] as number)) best = cell;
+  for (let cell = 1; cell < cellCount; cell++) if ((sums[cell] as number) > (sums[best] as number)) best = cell;
   return {
     cells: new Int32Array(frameCount).fill(firstCell + best),
     meanScore: (sums[best] ?? 0) / frameCount,

@@ -7,17 +7,13 @@
  * Reference: F. Harris (1978), On the use of windows for harmonic analysis with the discrete Fourier
  * transform, Proc. IEEE 66(1), section V.
  */
-export function cosineSumWindow(
-  length: number,
-  coefficients: readonly number[],
-): Float64Array {
+export function cosineSumWindow(length: number, coefficients: readonly number[]): Float64Array {
   const window = new Float64Array(length);
   for (let sample = 0; sample < length; sample++) {
     let value = 0;
     for (const [order, coefficient] of coefficients.entries()) {
       const sign = order % 2 === 0 ? 1 : -1;
-      value +=
-        sign * coefficient * Math.cos((2 * Math.PI * order * sample) / length);
+      value += sign * coefficient * Math.cos((2 * Math.PI * order * sample) / length);
     }
     window[sample] = value;
   }

@@ -11,11 +11,7 @@ const HALVING_COUNT = 60;
  * @example bisect((x) => x * x - 2, 0, 2) // 1.4142135623730951
  * Reference: W. Press et al. (2007), Numerical recipes, section 9.1.1.
  */
-export function bisect(
-  rising: (x: number) => number,
-  low: number,
-  high: number,
-): number {
+export function bisect(rising: (x: number) => number, low: number, high: number): number {
   let left = low;
   let right = high;
   for (let halving = 0; halving < HALVING_COUNT; halving++) {

@@ -1,6 +1,6 @@
-import { CONFIDENCE_LEVEL, type Interval } from "./interval.ts";
-import { linearRegression } from "./linearRegression.ts";
-import { studentTQuantile } from "./studentT.ts";
+import { CONFIDENCE_LEVEL, type Interval } from './interval.ts';
+import { linearRegression } from './linearRegression.ts';
+import { studentTQuantile } from './studentT.ts';
 
 /** A straight line with what the scatter of its points leaves open. */
 export interface LineIntervals {
@@ -19,22 +19,11 @@ export interface LineIntervals {
  * Reference: N. Draper & H. Smith (1998), Applied regression analysis, section 1.4 (slope) and 3.2 (the x for a
  * given y, after Fieller: g is the squared relative half width of the slope; g ≥ 1 leaves the crossing open).
  */
-export function lineIntervals(
-  x: readonly number[],
-  y: readonly number[],
-): LineIntervals {
+export function lineIntervals(x: readonly number[], y: readonly number[]): LineIntervals {
   const count = x.length;
-  if (count < 3)
-    throw new RangeError(
-      `lineIntervals: x must hold at least 3 values, got ${count}`,
-    );
-  const { slope, intercept, residualVariance, sumOfSquares } = linearRegression(
-    x,
-    y,
-  );
-  const halfWidth =
-    studentTQuantile(CONFIDENCE_LEVEL, count - 2) *
-    Math.sqrt(residualVariance / sumOfSquares);
+  if (count < 3) throw new RangeError(`lineIntervals: x must hold at least 3 values, got ${count}`);
+  const { slope, intercept, residualVariance, sumOfSquares } = linearRegression(x, y);
+  const halfWidth = studentTQuantile(CONFIDENCE_LEVEL, count - 2) * Math.sqrt(residualVariance / sumOfSquares);
   const g = (halfWidth / slope) ** 2;
   return {
     slope: { value: slope, low: slope - halfWidth, high: slope + halfWidth },
@@ -46,9 +35,7 @@ export function lineIntervals(
     const meanX = x.reduce((sum, value) => sum + value / count, 0);
     const middle = meanX + (crossing - meanX) / (1 - g);
     const reach =
-      (Math.abs(halfWidth / slope) *
-        Math.sqrt(((1 - g) * sumOfSquares) / count + (crossing - meanX) ** 2)) /
-      (1 - g);
+      (Math.abs(halfWidth / slope) * Math.sqrt(((1 - g) * sumOfSquares) / count + (crossing - meanX) ** 2)) / (1 - g);
     return { value: crossing, low: middle - reach, high: middle + reach };
   }
 }

@@ -17,15 +17,10 @@ export interface RegressionLine {
  * @example linearRegression([0, 1, 2], [1, 3, 5]).slope // 2
  * Reference: N. Draper & H. Smith (1998), Applied regression analysis, section 1.2.
  */
-export function linearRegression(
-  x: ArrayLike<number>,
-  y: ArrayLike<number>,
-): RegressionLine {
+export function linearRegression(x: ArrayLike<number>, y: ArrayLike<number>): RegressionLine {
   const count = x.length;
   if (y.length !== count)
-    throw new RangeError(
-      `linearRegression: x and y must be equally long, got ${count} and ${y.length}`,
-    );
+    throw new RangeError(`linearRegression: x and y must be equally long, got ${count} and ${y.length}`);
   let meanX = 0;
   let meanY = 0;
   for (let index = 0; index < count; index++) {
@@ -39,16 +34,12 @@ export function linearRegression(
     sumOfSquares += dx * dx;
     products += dx * ((y[index] as number) - meanY);
   }
-  if (!(sumOfSquares > 0))
-    throw new RangeError(
-      "linearRegression: x must hold at least two different values",
-    );
+  if (!(sumOfSquares > 0)) throw new RangeError('linearRegression: x must hold at least two different values');
   const slope = products / sumOfSquares;
   const intercept = meanY - slope * meanX;
   let residual = 0;
   for (let index = 0; index < count; index++) {
-    residual +=
-      ((y[index] as number) - intercept - slope * (x[index] as number)) ** 2;
+    residual += ((y[index] as number) - intercept - slope * (x[index] as number)) ** 2;
   }
   return {
     slope,

@@ -1,6 +1,6 @@
-import { chiSquareQuantile } from "./chiSquare.ts";
-import { CONFIDENCE_LEVEL, type Interval } from "./interval.ts";
-import { studentTQuantile } from "./studentT.ts";
+import { chiSquareQuantile } from './chiSquare.ts';
+import { CONFIDENCE_LEVEL, type Interval } from './interval.ts';
+import { studentTQuantile } from './studentT.ts';
 
 /** Mean and spread of values that scatter normally. */
 export interface NormalSample {
@@ -21,20 +21,13 @@ export interface NormalSample {
  */
 export function normalSample(values: readonly number[]): NormalSample {
   const count = values.length;
-  if (count < 2)
-    throw new RangeError(
-      `normalSample: values must hold at least 2, got ${count}`,
-    );
+  if (count < 2) throw new RangeError(`normalSample: values must hold at least 2, got ${count}`);
   const roughMean = values.reduce((sum, value) => sum + value / count, 0);
-  const mean =
-    roughMean +
-    values.reduce((sum, value) => sum + (value - roughMean) / count, 0);
+  const mean = roughMean + values.reduce((sum, value) => sum + (value - roughMean) / count, 0);
   const squares = values.reduce((sum, value) => sum + (value - mean) ** 2, 0);
   const degreesOfFreedom = count - 1;
   const deviation = Math.sqrt(squares / degreesOfFreedom);
-  const meanHalfWidth =
-    (studentTQuantile(CONFIDENCE_LEVEL, degreesOfFreedom) * deviation) /
-    Math.sqrt(count);
+  const meanHalfWidth = (studentTQuantile(CONFIDENCE_LEVEL, degreesOfFreedom) * deviation) / Math.sqrt(count);
   const tail = (1 - CONFIDENCE_LEVEL) / 2;
   return {
     mean: {

@@ -7,18 +7,12 @@
  * @example quantile([1, 2, 3, 4], 0.5) // 2.5
  * Reference: R. Hyndman & Y. Fan (1996), Sample quantiles in statistical packages, The American Statistician 50(4), definition 7.
  */
-export function quantile(
-  values: ArrayLike<number>,
-  probability: number,
-): number {
+export function quantile(values: ArrayLike<number>, probability: number): number {
   return quantileOfSorted(Float64Array.from(values).sort(), probability);
 }
 
 /** The same for values that are already in ascending order. */
-export function quantileOfSorted(
-  sorted: Float64Array,
-  probability: number,
-): number {
+export function quantileOfSorted(sorted: Float64Array, probability: number): number {
   const position = (sorted.length - 1) * probability;
   const left = Math.floor(position);
   const here = sorted[left] ?? Number.NaN;
@@ -41,8 +35,5 @@ const NORMAL_CONSISTENCY = 1.4826;
  */
 export function robustSpread(values: ArrayLike<number>): number {
   const middle = median(values);
-  return (
-    NORMAL_CONSISTENCY *
-    median(Float64Array.from(values, (value) => Math.abs(value - middle)))
-  );
+  return NORMAL_CONSISTENCY * median(Float64Array.from(values, (value) => Math.abs(value - middle)));
 }

@@ -1,4 +1,4 @@
-import { bisect } from "./bisect.ts";
+import { bisect } from './bisect.ts';
 
 /**
  * Two-sided quantile of Student's t distribution: |T| stays below it with the given probability.
@@ -10,22 +10,14 @@ import { bisect } from "./bisect.ts";
  * Reference: M. Abramowitz & I. Stegun (1972), Handbook of mathematical functions, 26.7.3 and 26.7.4: with
  * θ = arctan(t / √ν), P(|T| < t) is a finite sum of powers of cos θ. Solved for θ, which is bounded, not for t.
  */
-export function studentTQuantile(
-  probability: number,
-  degreesOfFreedom: number,
-): number {
+export function studentTQuantile(probability: number, degreesOfFreedom: number): number {
   if (!(probability > 0 && probability < 1)) {
-    throw new RangeError(
-      `studentTQuantile: probability must be in (0, 1), got ${probability}`,
-    );
+    throw new RangeError(`studentTQuantile: probability must be in (0, 1), got ${probability}`);
   }
   if (!Number.isInteger(degreesOfFreedom) || degreesOfFreedom < 1) {
-    throw new RangeError(
-      `studentTQuantile: degreesOfFreedom must be an integer ≥ 1, got ${degreesOfFreedom}`,
-    );
+    throw new RangeError(`studentTQuantile: degreesOfFreedom must be an integer ≥ 1, got ${degreesOfFreedom}`);
   }
-  const excess = (theta: number) =>
-    coverage(theta, degreesOfFreedom) - probability;
+  const excess = (theta: number) => coverage(theta, degreesOfFreedom) - probability;
   return Math.tan(bisect(excess, 0, Math.PI / 2)) * Math.sqrt(degreesOfFreedom);
 }
 
@@ -39,7 +31,5 @@ function coverage(theta: number, degreesOfFreedom: number): number {
     term *= (squaredCosine * (order - 1)) / order;
     sum += term;
   }
-  return isOdd
-    ? (2 / Math.PI) * (theta + Math.sin(theta) * sum)
-    : Math.sin(theta) * sum;
+  return isOdd ? (2 / Math.PI) * (theta + Math.sin(theta) * sum) : Math.sin(theta) * sum;
 }

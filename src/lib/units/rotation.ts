@@ -31,10 +31,7 @@ export function rpmFromHertz(shaftHz: number): number {
  * @returns the event rate, Hz
  * @example eventHertzFromRpm(2874, 6) // 287.4
  */
-export function eventHertzFromRpm(
-  shaftRpm: number,
-  eventsPerTurn: number,
-): number {
+export function eventHertzFromRpm(shaftRpm: number, eventsPerTurn: number): number {
   return (shaftRpm * eventsPerTurn) / SECONDS_PER_MINUTE;
 }
 
@@ -46,9 +43,6 @@ export function eventHertzFromRpm(
  * @returns the shaft speed, rpm
  * @example rpmFromEventHertz(287.4, 6) // 2874
  */
-export function rpmFromEventHertz(
-  eventHz: number,
-  eventsPerTurn: number,
-): number {
+export function rpmFromEventHertz(eventHz: number, eventsPerTurn: number): number {
   return (eventHz * SECONDS_PER_MINUTE) / eventsPerTurn;
 }

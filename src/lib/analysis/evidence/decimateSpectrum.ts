@@ -23,20 +23,13 @@ export function decimateSpectrum(
 ): SpectrumRows {
   const { step, firstBin } = options;
   const endBin = Math.min(options.endBin, levels.length);
-  const group = Math.max(
-    1,
-    Math.ceil((endBin - firstBin) / MOST_SPECTRUM_ROWS),
-  );
+  const group = Math.max(1, Math.ceil((endBin - firstBin) / MOST_SPECTRUM_ROWS));
   const count = Math.max(0, Math.ceil((endBin - firstBin) / group));
   const positions = new Float32Array(count);
   const kept = new Float32Array(count);
   for (let row = 0; row < count; row++) {
     let best = firstBin + row * group;
-    for (
-      let bin = best + 1;
-      bin < Math.min(endBin, firstBin + (row + 1) * group);
-      bin++
-    ) {
+    for (let bin = best + 1; bin < Math.min(endBin, firstBin + (row + 1) * group); bin++) {
       if ((levels[bin] as number) > (levels[best] as number)) best = bin;
     }
     positions[row] = best * step;

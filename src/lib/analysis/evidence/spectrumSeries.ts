@@ -1,9 +1,9 @@
-import { subtractNoiseFloor } from "#lib/signal/noiseFloor.ts";
-import { averageSpectrum } from "#lib/signal/averageSpectrum.ts";
-import type { SampledSignal } from "#lib/signal/frontEnd.ts";
-import { decibelsFromLogPower } from "#lib/units/decibels.ts";
-import type { Series } from "../series.ts";
-import { decimateSpectrum } from "./decimateSpectrum.ts";
+import { subtractNoiseFloor } from '#lib/signal/noiseFloor.ts';
+import { averageSpectrum } from '#lib/signal/averageSpectrum.ts';
+import type { SampledSignal } from '#lib/signal/frontEnd.ts';
+import { decibelsFromLogPower } from '#lib/units/decibels.ts';
+import type { Series } from '../series.ts';
+import { decimateSpectrum } from './decimateSpectrum.ts';
 
 /** Resolution of the drawn spectra: fine enough to part shaft orders, coarse enough to average noise. */
 const WAVEFORM_SIZE = 32_768;
@@ -19,46 +19,30 @@ const LOWEST_WAVEFORM_HZ = 10;
 /** The spectrum of the sound as stored: level above the local noise floor over frequency. */
 export function spectrumSeries(signal: SampledSignal): Series {
   return {
-    name: "spectrum",
+    name: 'spectrum',
     columns: columnsOf([signal], WAVEFORM_SIZE, LOWEST_WAVEFORM_HZ),
   };
 }
 
 /** The spectrum of the sound's envelopes, at each frequency that of the band in which the line stands out most. */
-export function envelopeSpectrumSeries(
-  envelopes: readonly SampledSignal[],
-): Series {
+export function envelopeSpectrumSeries(envelopes: readonly SampledSignal[]): Series {
   return {
-    name: "envelopeSpectrum",
+    name: 'envelopeSpectrum',
     columns: columnsOf(envelopes, ENVELOPE_SIZE, LOWEST_ENVELOPE_HZ),
   };
 }
 
-function columnsOf(
-  signals: readonly SampledSignal[],
-  size: number,
-  lowestHz: number,
-): Series["columns"] {
+function columnsOf(signals: readonly SampledSignal[], size: number, lowestHz: number): Series['columns'] {
   const strongest = new Float32Array(size / 2 + 1).fill(-Infinity);
   let binHz = 1;
   for (const signal of signals) {
-    const spectrum = averageSpectrum(
-      signal.samples,
-      signal.sampleRateHz,
-      size,
-      MOST_SEGMENTS,
-    );
+    const spectrum = averageSpectrum(signal.samples, signal.sampleRateHz, size, MOST_SEGMENTS);
     const levels = subtractNoiseFloor(
-      Float32Array.from(spectrum.power, (power) =>
-        Math.log(power + Number.MIN_VALUE),
-      ),
+      Float32Array.from(spectrum.power, (power) => Math.log(power + Number.MIN_VALUE)),
       FLOOR_REACH_BINS,
     );
     for (let bin = 0; bin < levels.length; bin++)
-      strongest[bin] = Math.max(
-        strongest[bin] as number,
-        decibelsFromLogPower(levels[bin] as number),
-      );
+      strongest[bin] = Math.max(strongest[bin] as number, decibelsFromLogPower(levels[bin] as number));
     binHz = spectrum.binHz;
   }
   const rows = decimateSpectrum(strongest, {
@@ -67,7 +51,7 @@ function columnsOf(
     endBin: strongest.length,
   });
   return [
-    { name: "frequencyHz", unit: "Hz", values: rows.positions },
-    { name: "levelDecibels", unit: "dB", values: rows.levels },
+    { name: 'frequencyHz', unit: 'Hz', values: rows.positions },
+    { name: 'levelDecibels', unit: 'dB', values: rows.levels },
   ];
 }

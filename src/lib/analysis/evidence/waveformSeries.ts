@@ -1,4 +1,4 @@
-import type { Series } from "../series.ts";
+import type { Series } from '../series.ts';
 
 /** Most points of a waveform overview: more than any screen is wide. */
 const MOST_POINTS = 4096;
@@ -7,11 +7,9 @@ const MOST_POINTS = 4096;
  * Overview of the waveform: the lowest and highest sample of each stretch, so that no peak is lost.
  *
  * @param samples shape [sampleCount], full scale ±1
+ * @param startSeconds time of the first sample in the recording
  */
-export function waveformSeries(
-  samples: Float32Array,
-  sampleRateHz: number,
-): Series {
+export function waveformSeries(samples: Float32Array, sampleRateHz: number, startSeconds: number): Series {
   const count = Math.min(MOST_POINTS, samples.length);
   const timeSeconds = new Float32Array(count);
   const minimum = new Float32Array(count);
@@ -26,16 +24,16 @@ export function waveformSeries(
       if (value < low) low = value;
       if (value > high) high = value;
     }
-    timeSeconds[point] = (start + end) / 2 / sampleRateHz;
+    timeSeconds[point] = startSeconds + (start + end) / 2 / sampleRateHz;
     minimum[point] = low;
     maximum[point] = high;
   }
   return {
-    name: "waveform",
+    name: 'waveform',
     columns: [
-      { name: "timeSeconds", unit: "s", values: timeSeconds },
-      { name: "minimum", unit: "1", values: minimum },
-      { name: "maximum", unit: "1", values: maximum },
+      { name: 'timeSeconds', unit: 's', values: timeSeconds },
+      { name: 'minimum', unit: '1', values: minimum },
+      { name: 'maximum', unit: '1', values: maximum },
     ],
   };
 }

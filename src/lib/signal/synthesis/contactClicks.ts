@@ -1,7 +1,7 @@
-import type { Random } from "./random.ts";
-import { excite } from "./resonance.ts";
-import type { Resonance } from "./resonance.ts";
-import type { ShaftMotion } from "./speedProfile.ts";
+import type { Random } from './random.ts';
+import { excite } from './resonance.ts';
+import type { Resonance } from './resonance.ts';
+import type { ShaftMotion } from './speedProfile.ts';
 
 /** Clicks of contacts, brush gaps or teeth that pass a fixed point. */
 export interface ContactOptions {
@@ -36,10 +36,8 @@ export function addContactClicks(
   const { perTurn, random } = options;
   const impulses = new Float64Array(output.length);
   const contacts = Array.from({ length: perTurn }, (_, contact) => ({
-    turn:
-      (contact + options.spacingUnevenness * random.between(-1, 1)) / perTurn,
-    strength:
-      options.amplitude * (1 - options.strengthUnevenness * random.uniform()),
+    turn: (contact + options.spacingUnevenness * random.between(-1, 1)) / perTurn,
+    strength: options.amplitude * (1 - options.strengthUnevenness * random.uniform()),
   }));
   for (const contact of contacts) {
     // Each pass has its own jitter; it is at most a fraction of the spacing, so passes stay in order.
@@ -64,14 +62,9 @@ export function addContactClicks(
 }
 
 /** Splits an impulse between the two samples around a fractional position. */
-function placeImpulse(
-  impulses: Float64Array,
-  position: number,
-  amplitude: number,
-): void {
+function placeImpulse(impulses: Float64Array, position: number, amplitude: number): void {
   const left = Math.max(0, Math.floor(position));
   const part = position - left;
   impulses[left] = (impulses[left] ?? 0) + amplitude * (1 - part);
-  if (left + 1 < impulses.length)
-    impulses[left + 1] = (impulses[left + 1] as number) + amplitude * part;
+  if (left + 1 < impulses.length) impulses[left + 1] = (impulses[left + 1] as number) + amplitude * part;
 }

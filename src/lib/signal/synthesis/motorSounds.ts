@@ -1,8 +1,8 @@
-import type { MotorSoundOptions } from "./synthesiseMotor.ts";
-import { TABLE_TOP_RESONANCES } from "./resonance.ts";
+import type { MotorSoundOptions } from './synthesiseMotor.ts';
+import { TABLE_TOP_RESONANCES } from './resonance.ts';
 
 /** The parts of a synthetic recording that differ between kinds of motor. */
-export type MotorSound = Pick<MotorSoundOptions, "contacts" | "shaftTones">;
+export type MotorSound = Pick<MotorSoundOptions, 'contacts' | 'shaftTones'>;
 
 /** A hand-made motor: two uneven contacts that click and make the table ring. */
 export function twoContactSound(unevenness = 0.4): MotorSound {

@@ -1,8 +1,8 @@
-import { filterInPlace, lowPassBiquad, BUTTERWORTH_Q } from "../biquad.ts";
-import type { Random } from "./random.ts";
+import { filterInPlace, lowPassBiquad, BUTTERWORTH_Q } from '../biquad.ts';
+import type { Random } from './random.ts';
 
 /** Colours of background noise: white, falling 3 dB per octave, or gusts of low rumble. */
-export const NOISE_COLOURS = ["white", "pink", "wind"] as const;
+export const NOISE_COLOURS = ['white', 'pink', 'wind'] as const;
 export type NoiseColour = (typeof NOISE_COLOURS)[number];
 
 const WIND_CORNER_HZ = 180;
@@ -24,10 +24,9 @@ export function colouredNoise(
   },
 ): Float64Array {
   const noise = new Float64Array(options.sampleCount);
-  for (let sample = 0; sample < noise.length; sample++)
-    noise[sample] = options.random.normal();
-  if (colour === "pink") makePink(noise);
-  if (colour === "wind") makeWind(noise, options.sampleRateHz, options.random);
+  for (let sample = 0; sample < noise.length; sample++) noise[sample] = options.random.normal();
+  if (colour === 'pink') makePink(noise);
+  if (colour === 'wind') makeWind(noise, options.sampleRateHz, options.random);
   return scaledToUnitPower(noise);
 }
 
@@ -44,11 +43,7 @@ function makePink(noise: Float64Array): void {
   }
 }
 
-function makeWind(
-  noise: Float64Array,
-  sampleRateHz: number,
-  random: Random,
-): void {
+function makeWind(noise: Float64Array, sampleRateHz: number, random: Random): void {
   const section = lowPassBiquad({
     frequencyHz: WIND_CORNER_HZ,
     sampleRateHz,
@@ -65,9 +60,7 @@ function makeWind(
 }
 
 function scaledToUnitPower(noise: Float64Array): Float64Array {
-  const power =
-    noise.reduce((sum, value) => sum + value * value, 0) /
-    Math.max(1, noise.length);
+  const power = noise.reduce((sum, value) => sum + value * value, 0) / Math.max(1, noise.length);
   const scale = power > 0 ? 1 / Math.sqrt(power) : 0;
   return noise.map((value) => value * scale);
 }

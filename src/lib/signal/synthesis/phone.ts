@@ -1,4 +1,4 @@
-import { BUTTERWORTH_Q, filterInPlace, highPassBiquad } from "../biquad.ts";
+import { BUTTERWORTH_Q, filterInPlace, highPassBiquad } from '../biquad.ts';
 
 /** What a phone does to the sound before it reaches the file. */
 export interface PhoneOptions {
@@ -17,11 +17,7 @@ const AUTOMATIC_GAIN_SECONDS = 0.25;
 const HIGHEST_AUTOMATIC_GAIN = 50;
 
 /** The samples that the phone stores, full scale ±1, 16 bit steps not applied; `sound` is overwritten on the way. */
-export function recordWithPhone(
-  sound: Float64Array,
-  phone: PhoneOptions,
-  sampleRateHz: number,
-): Float32Array {
+export function recordWithPhone(sound: Float64Array, phone: PhoneOptions, sampleRateHz: number): Float32Array {
   filterInPlace(sound, [
     highPassBiquad({
       frequencyHz: phone.highPassHz,
@@ -32,10 +28,7 @@ export function recordWithPhone(
   if (phone.hasAutomaticGain) levelInPlace(sound, sampleRateHz);
   const samples = new Float32Array(sound.length);
   for (let sample = 0; sample < samples.length; sample++) {
-    samples[sample] = Math.max(
-      -1,
-      Math.min(1, phone.gain * (sound[sample] as number)),
-    );
+    samples[sample] = Math.max(-1, Math.min(1, phone.gain * (sound[sample] as number)));
   }
   return samples;
 }
@@ -46,11 +39,6 @@ function levelInPlace(sound: Float64Array, sampleRateHz: number): void {
   for (let sample = 0; sample < sound.length; sample++) {
     const value = sound[sample] as number;
     power = memory * power + (1 - memory) * value * value;
-    sound[sample] =
-      value *
-      Math.min(
-        HIGHEST_AUTOMATIC_GAIN,
-        AUTOMATIC_GAIN_TARGET / Math.sqrt(power + Number.EPSILON),
-      );
+    sound[sample] = value * Math.min(HIGHEST_AUTOMATIC_GAIN, AUTOMATIC_GAIN_TARGET / Math.sqrt(power + Number.EPSILON));
   }
 }

@@ -24,9 +24,7 @@ export function createRandom(seed: number): Random {
   return {
     uniform,
     between: (low, high) => low + (high - low) * uniform(),
-    normal: () =>
-      Math.sqrt(-2 * Math.log(1 - uniform())) *
-      Math.cos(2 * Math.PI * uniform()),
+    normal: () => Math.sqrt(-2 * Math.log(1 - uniform())) * Math.cos(2 * Math.PI * uniform()),
   };
 }
 

@@ -1,4 +1,4 @@
-import { bandPassBiquad, filterInPlace } from "../biquad.ts";
+import { bandPassBiquad, filterInPlace } from '../biquad.ts';
 
 /** One mode of the motor's body or its mount. */
 export interface Resonance {
@@ -29,14 +29,11 @@ export function excite(
 ): void {
   for (const { frequencyHz, quality, gain } of resonances) {
     if (frequencyHz > HIGHEST_MODE_FRACTION * sampleRateHz) continue;
-    const ringing = filterInPlace(Float64Array.from(drive), [
-      bandPassBiquad({ frequencyHz, sampleRateHz, quality }),
-    ]);
+    const ringing = filterInPlace(Float64Array.from(drive), [bandPassBiquad({ frequencyHz, sampleRateHz, quality })]);
     // The impulse response of a unit-gain mode starts at ω/Q; the factor makes a click about as high as its amplitude.
     const scale = (gain * quality * sampleRateHz) / (2 * Math.PI * frequencyHz);
     for (let sample = 0; sample < output.length; sample++) {
-      output[sample] =
-        (output[sample] as number) + scale * (ringing[sample] as number);
+      output[sample] = (output[sample] as number) + scale * (ringing[sample] as number);
     }
   }
 }

@@ -1,5 +1,5 @@
-import { hertzFromRpm } from "#lib/units/rotation.ts";
-import type { Random } from "./random.ts";
+import { hertzFromRpm } from '#lib/units/rotation.ts';
+import type { Random } from './random.ts';
 
 /** One point of a speed profile; between points the speed is interpolated linearly. */
 export interface SpeedPoint {
@@ -41,13 +41,8 @@ export function shaftMotion(options: ProfileOptions): ShaftMotion {
   let segment = 0;
   for (let sample = 0; sample < sampleCount; sample++) {
     const timeSeconds = sample / sampleRateHz;
-    while (
-      segment + 1 < points.length - 1 &&
-      (points[segment + 1]?.timeSeconds ?? Infinity) <= timeSeconds
-    )
-      segment++;
-    const speed =
-      speedAt(points[segment], points[segment + 1], timeSeconds) * (1 + wander);
+    while (segment + 1 < points.length - 1 && (points[segment + 1]?.timeSeconds ?? Infinity) <= timeSeconds) segment++;
+    const speed = speedAt(points[segment], points[segment + 1], timeSeconds) * (1 + wander);
     shaftSpeedRpm[sample] = speed;
     angle += hertzFromRpm(speed) / sampleRateHz;
     turns[sample] = angle;
@@ -56,17 +51,10 @@ export function shaftMotion(options: ProfileOptions): ShaftMotion {
   return { shaftSpeedRpm, turns };
 }
 
-function speedAt(
-  before: SpeedPoint | undefined,
-  after: SpeedPoint | undefined,
-  timeSeconds: number,
-): number {
-  if (!before)
-    throw new RangeError("shaftMotion: points must hold at least one point");
+function speedAt(before: SpeedPoint | undefined, after: SpeedPoint | undefined, timeSeconds: number): number {
+  if (!before) throw new RangeError('shaftMotion: points must hold at least one point');
   if (!after || timeSeconds <= before.timeSeconds) return before.shaftSpeedRpm;
   const span = after.timeSeconds - before.timeSeconds;
   const part = Math.min(1, (timeSeconds - before.timeSeconds) / span);
-  return (
-    before.shaftSpeedRpm + part * (after.shaftSpeedRpm - before.shaftSpeedRpm)
-  );
+  return before.shaftSpeedRpm + part * (after.shaftSpeedRpm - before.shaftSpeedRpm);
 }

@@ -1,15 +1,15 @@
-import { amplitudeFromDecibels } from "#lib/units/decibels.ts";
-import { addContactClicks } from "./contactClicks.ts";
-import type { ContactOptions } from "./contactClicks.ts";
-import { colouredNoise } from "./noise.ts";
-import type { NoiseColour } from "./noise.ts";
-import { recordWithPhone } from "./phone.ts";
-import type { PhoneOptions } from "./phone.ts";
-import { createRandom } from "./random.ts";
-import { shaftMotion } from "./speedProfile.ts";
-import type { ShaftMotion, SpeedPoint } from "./speedProfile.ts";
-import { addFixedTone, addShaftTones } from "./tonalParts.ts";
-import type { FixedTone, ShaftTones } from "./tonalParts.ts";
+import { amplitudeFromDecibels } from '#lib/units/decibels.ts';
+import { addContactClicks } from './contactClicks.ts';
+import type { ContactOptions } from './contactClicks.ts';
+import { colouredNoise } from './noise.ts';
+import type { NoiseColour } from './noise.ts';
+import { recordWithPhone } from './phone.ts';
+import type { PhoneOptions } from './phone.ts';
+import { createRandom } from './random.ts';
+import { shaftMotion } from './speedProfile.ts';
+import type { ShaftMotion, SpeedPoint } from './speedProfile.ts';
+import { addFixedTone, addShaftTones } from './tonalParts.ts';
+import type { FixedTone, ShaftTones } from './tonalParts.ts';
 
 /** What a synthetic recording contains; parts that are left out are silent. */
 export interface MotorSoundOptions {
@@ -23,9 +23,7 @@ export interface MotorSoundOptions {
   readonly contacts?: readonly ContactOptions[];
   readonly shaftTones?: readonly ShaftTones[];
   readonly fixedTones?: readonly FixedTone[];
-  readonly noise?:
-    | { readonly colour: NoiseColour; readonly levelDecibels: number }
-    | undefined;
+  readonly noise?: { readonly colour: NoiseColour; readonly levelDecibels: number } | undefined;
   readonly phone?: PhoneOptions;
 }
 
@@ -57,9 +55,7 @@ const PLAIN_PHONE: PhoneOptions = {
  * @returns samples and the true speed
  * @example synthesiseMotor({ seed: 1, durationSeconds: 1, sampleRateHz: 8000, speed: [{ timeSeconds: 0, shaftSpeedRpm: 600 }] }).samples.length // 8000
  */
-export function synthesiseMotor(
-  options: MotorSoundOptions,
-): SynthesisedRecording {
+export function synthesiseMotor(options: MotorSoundOptions): SynthesisedRecording {
   const { sampleRateHz } = options;
   const random = createRandom(options.seed);
   const sampleCount = Math.round(options.durationSeconds * sampleRateHz);
@@ -71,12 +67,9 @@ export function synthesiseMotor(
     random,
   });
   const sound = new Float64Array(sampleCount);
-  for (const contacts of options.contacts ?? [])
-    addContactClicks(sound, motion, { ...contacts, sampleRateHz, random });
-  for (const tones of options.shaftTones ?? [])
-    addShaftTones(sound, motion, { ...tones, random });
-  for (const tone of options.fixedTones ?? [])
-    addFixedTone(sound, tone, { sampleRateHz, random });
+  for (const contacts of options.contacts ?? []) addContactClicks(sound, motion, { ...contacts, sampleRateHz, random });
+  for (const tones of options.shaftTones ?? []) addShaftTones(sound, motion, { ...tones, random });
+  for (const tone of options.fixedTones ?? []) addFixedTone(sound, tone, { sampleRateHz, random });
   if (options.noise) {
     const level = amplitudeFromDecibels(options.noise.levelDecibels);
     const noise = colouredNoise(options.noise.colour, {
@@ -85,8 +78,7 @@ export function synthesiseMotor(
       random,
     });
     for (let sample = 0; sample < sampleCount; sample++)
-      sound[sample] =
-        (sound[sample] as number) + level * (noise[sample] as number);
+      sound[sample] = (sound[sample] as number) + level * (noise[sample] as number);
   }
   return {
     samples: recordWithPhone(sound, options.phone ?? PLAIN_PHONE, sampleRateHz),
@@ -94,18 +86,14 @@ export function synthesiseMotor(
   };
 }
 
-function truthOf(
-  motion: ShaftMotion,
-  sampleRateHz: number,
-): SynthesisedRecording["truth"] {
+function truthOf(motion: ShaftMotion, sampleRateHz: number): SynthesisedRecording['truth'] {
   const stepSamples = TRUTH_STEP_SECONDS * sampleRateHz;
   const count = Math.floor(motion.shaftSpeedRpm.length / stepSamples);
   const timeSeconds = new Float32Array(count);
   const shaftSpeedRpm = new Float32Array(count);
   for (let point = 0; point < count; point++) {
     timeSeconds[point] = point * TRUTH_STEP_SECONDS;
-    shaftSpeedRpm[point] =
-      motion.shaftSpeedRpm[Math.round(point * stepSamples)] ?? 0;
+    shaftSpeedRpm[point] = motion.shaftSpeedRpm[Math.round(point * stepSamples)] ?? 0;
   }
   return { timeSeconds, shaftSpeedRpm };
 }

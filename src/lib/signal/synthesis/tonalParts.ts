@@ -1,6 +1,6 @@
-import { amplitudeFromDecibels } from "#lib/units/decibels.ts";
-import type { Random } from "./random.ts";
-import type { ShaftMotion } from "./speedProfile.ts";
+import { amplitudeFromDecibels } from '#lib/units/decibels.ts';
+import type { Random } from './random.ts';
+import type { ShaftMotion } from './speedProfile.ts';
 
 /** Tones locked to the shaft: commutation ripple, blade passing, gear mesh, unbalance. */
 export interface ShaftTones {
@@ -38,25 +38,14 @@ export function addShaftTones(
   const modulationPhase = random.uniform();
   for (let harmonic = 1; harmonic <= options.harmonicCount; harmonic++) {
     const phase = random.uniform();
-    const level =
-      options.amplitude *
-      amplitudeFromDecibels(
-        -options.slopeDecibelsPerOctave * Math.log2(harmonic),
-      );
+    const level = options.amplitude * amplitudeFromDecibels(-options.slopeDecibelsPerOctave * Math.log2(harmonic));
     for (let sample = 1; sample < output.length; sample++) {
       const turns = motion.turns[sample] as number;
-      const advance =
-        (turns - (motion.turns[sample - 1] as number)) * harmonic * perTurn;
+      const advance = (turns - (motion.turns[sample - 1] as number)) * harmonic * perTurn;
       if (advance <= 0 || advance > HIGHEST_TONE_FRACTION) continue;
-      const modulation =
-        1 +
-        options.modulationDepth *
-          Math.cos(2 * Math.PI * (turns + modulationPhase));
+      const modulation = 1 + options.modulationDepth * Math.cos(2 * Math.PI * (turns + modulationPhase));
       output[sample] =
-        (output[sample] as number) +
-        level *
-          modulation *
-          Math.cos(2 * Math.PI * (harmonic * perTurn * turns + phase));
+        (output[sample] as number) + level * modulation * Math.cos(2 * Math.PI * (harmonic * perTurn * turns + phase));
     }
   }
 }
@@ -68,15 +57,12 @@ export function addFixedTone(
   options: { readonly sampleRateHz: number; readonly random: Random },
 ): void {
   for (let harmonic = 1; harmonic <= tone.harmonicCount; harmonic++) {
-    const cyclesPerSample =
-      (harmonic * tone.frequencyHz) / options.sampleRateHz;
+    const cyclesPerSample = (harmonic * tone.frequencyHz) / options.sampleRateHz;
     if (cyclesPerSample > HIGHEST_TONE_FRACTION) return;
     const phase = options.random.uniform();
     const level = tone.amplitude / 2 ** (harmonic - 1);
     for (let sample = 0; sample < output.length; sample++) {
-      output[sample] =
-        (output[sample] as number) +
-        level * Math.cos(2 * Math.PI * (cyclesPerSample * sample + phase));
+      output[sample] = (output[sample] as number) + level * Math.cos(2 * Math.PI * (cyclesPerSample * sample + phase));
     }
   }
 }

@@ -1,6 +1,6 @@
-import { describe, expect, it } from "vitest";
-import { eventsPerTurnFromGeometry } from "#lib/motor/eventsPerTurn.ts";
-import type { MotorGeometry } from "#lib/motor/geometry.ts";
+import { describe, expect, it } from 'vitest';
+import { eventsPerTurnFromGeometry } from '#lib/motor/eventsPerTurn.ts';
+import type { MotorGeometry } from '#lib/motor/geometry.ts';
 
 const NOTHING: MotorGeometry = {
   poles: null,
@@ -10,7 +10,7 @@ const NOTHING: MotorGeometry = {
   magnets: null,
 };
 
-describe("eventsPerTurnFromGeometry", () => {
+describe('eventsPerTurnFromGeometry', () => {
   // Ripples per turn = lcm(brush sites, segments): check-values.json, orders/ripple-*, after Microchip AN3049.
   it.each([
     [2, 2, 2],
@@ -25,26 +25,20 @@ describe("eventsPerTurnFromGeometry", () => {
     [4, 8, 8],
     [4, 10, 20],
     [6, 7, 42],
-  ])(
-    "counts the ripples of %d brush sites over %d segments as %d",
-    (poles, segments, ripples) => {
-      expect(
-        eventsPerTurnFromGeometry({ ...NOTHING, poles, segments })
-          .eventsPerTurn,
-      ).toBe(ripples);
-    },
-  );
+  ])('counts the ripples of %d brush sites over %d segments as %d', (poles, segments, ripples) => {
+    expect(eventsPerTurnFromGeometry({ ...NOTHING, poles, segments }).eventsPerTurn).toBe(ripples);
+  });
 
-  it("assumes two brush sites when only segments are known, and says so", () => {
+  it('assumes two brush sites when only segments are known, and says so', () => {
     const { eventsPerTurn, explanation } = eventsPerTurnFromGeometry({
       ...NOTHING,
       segments: 3,
     });
     expect(eventsPerTurn).toBe(6);
-    expect(explanation).toContain("two brush sites assumed");
+    expect(explanation).toContain('two brush sites assumed');
   });
 
-  it("counts blades, and teeth after blades", () => {
+  it('counts blades, and teeth after blades', () => {
     const { eventsPerTurn, orders } = eventsPerTurnFromGeometry({
       ...NOTHING,
       blades: 5,
@@ -54,7 +48,7 @@ describe("eventsPerTurnFromGeometry", () => {
     expect(orders).toEqual([5, 12]);
   });
 
-  it("keeps the blades as an order to expect beside the commutator", () => {
+  it('keeps the blades as an order to expect beside the commutator', () => {
     expect(
       eventsPerTurnFromGeometry({
         ...NOTHING,
@@ -66,7 +60,7 @@ describe("eventsPerTurnFromGeometry", () => {
   });
 
   // check-values.json, orders/bldc: 14 magnets at 10,000 rpm ripple at 7000 Hz, which is order 42.
-  it("expects the six-step ripple, the pulls and the electrical order of 14 magnets", () => {
+  it('expects the six-step ripple, the pulls and the electrical order of 14 magnets', () => {
     const { eventsPerTurn, orders } = eventsPerTurnFromGeometry({
       ...NOTHING,
       magnets: 14,
@@ -75,21 +69,17 @@ describe("eventsPerTurnFromGeometry", () => {
     expect(orders).toEqual([42, 14, 7]);
   });
 
-  it("assumes one event a turn when nothing is known, and says so", () => {
-    const { eventsPerTurn, orders, explanation } =
-      eventsPerTurnFromGeometry(NOTHING);
+  it('assumes one event a turn when nothing is known, and says so', () => {
+    const { eventsPerTurn, orders, explanation } = eventsPerTurnFromGeometry(NOTHING);
     expect([eventsPerTurn, orders]).toEqual([1, [1]]);
-    expect(explanation).toContain("one event per turn is assumed");
+    expect(explanation).toContain('one event per turn is assumed');
   });
 
   it.each([
-    [{ ...NOTHING, blades: 0 }, "blades must be a positive integer, got 0"],
-    [
-      { ...NOTHING, segments: 2.5 },
-      "segments must be a positive integer, got 2.5",
-    ],
-    [{ ...NOTHING, magnets: 7 }, "magnets must be even, got 7"],
-  ])("refuses %o", (geometry, message) => {
+    [{ ...NOTHING, blades: 0 }, 'blades must be a positive integer, got 0'],
+    [{ ...NOTHING, segments: 2.5 }, 'segments must be a positive integer, got 2.5'],
+    [{ ...NOTHING, magnets: 7 }, 'magnets must be even, got 7'],
+  ])('refuses %o', (geometry, message) => {
     expect(() => eventsPerTurnFromGeometry(geometry)).toThrow(message);
   });
 });

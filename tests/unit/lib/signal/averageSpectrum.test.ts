@@ -1,18 +1,12 @@
-import { describe, expect, it } from "vitest";
-import { averageSpectrum } from "#lib/signal/averageSpectrum.ts";
-import { createRandom } from "#lib/signal/synthesis/random.ts";
+import { describe, expect, it } from 'vitest';
+import { averageSpectrum } from '#lib/signal/averageSpectrum.ts';
+import { createRandom } from '#lib/signal/synthesis/random.ts';
 
 const RATE_HZ = 8000;
 
-function tones(
-  frequenciesHz: readonly number[],
-  seconds: number,
-): Float32Array {
+function tones(frequenciesHz: readonly number[], seconds: number): Float32Array {
   return Float32Array.from({ length: RATE_HZ * seconds }, (_, n) =>
-    frequenciesHz.reduce(
-      (sum, hertz) => sum + 0.4 * Math.sin((2 * Math.PI * hertz * n) / RATE_HZ),
-      0,
-    ),
+    frequenciesHz.reduce((sum, hertz) => sum + 0.4 * Math.sin((2 * Math.PI * hertz * n) / RATE_HZ), 0),
   );
 }
 
@@ -33,35 +27,29 @@ function highestPeaksHz(samples: Float32Array, count: number): number[] {
     .sort((a, b) => a - b);
 }
 
-describe("averageSpectrum", () => {
-  it("gives a full-scale sine in the middle of a bin its power of 0.5", () => {
-    const sine = Float32Array.from({ length: 4096 }, (_, n) =>
-      Math.sin((2 * Math.PI * 100 * n) / 1024),
-    );
+describe('averageSpectrum', () => {
+  it('gives a full-scale sine in the middle of a bin its power of 0.5', () => {
+    const sine = Float32Array.from({ length: 4096 }, (_, n) => Math.sin((2 * Math.PI * 100 * n) / 1024));
     const { power } = averageSpectrum(sine, 1024, 1024);
     expect(power[100]).toBeCloseTo(0.5, 6);
   });
 
-  it("spreads white noise of power 1 evenly: its bins add up to 1.5, the noise bandwidth of the window", () => {
+  it('spreads white noise of power 1 evenly: its bins add up to 1.5, the noise bandwidth of the window', () => {
     const random = createRandom(4);
     const noise = Float32Array.from({ length: 2 ** 17 }, () => random.normal());
     const { power } = averageSpectrum(noise, 1, 1024);
     // Relative scatter of a sum over 512 bins and 255 averages is below 1 %; 3 % is safe.
-    expect(power.reduce((sum, value) => sum + value, 0)).toBeGreaterThan(
-      1.5 * 0.97,
-    );
-    expect(power.reduce((sum, value) => sum + value, 0)).toBeLessThan(
-      1.5 * 1.03,
-    );
+    expect(power.reduce((sum, value) => sum + value, 0)).toBeGreaterThan(1.5 * 0.97);
+    expect(power.reduce((sum, value) => sum + value, 0)).toBeLessThan(1.5 * 1.03);
   });
 
   // ITU-T Q.23: key tones 697, 770, 852, 941 Hz with 1209, 1336, 1477, 1633 Hz.
   it.each([
-    ["1", 697, 1209],
-    ["5", 770, 1336],
-    ["9", 852, 1477],
-    ["D", 941, 1633],
-  ])("finds both tones of key %s within 0.05 Hz", (_, lowHz, highHz) => {
+    ['1', 697, 1209],
+    ['5', 770, 1336],
+    ['9', 852, 1477],
+    ['D', 941, 1633],
+  ])('finds both tones of key %s within 0.05 Hz', (_, lowHz, highHz) => {
     const [low, high] = highestPeaksHz(tones([lowHz, highHz], 4), 2);
     // A parabola on a Hann peak is off by at most 0.02 bins of 0.49 Hz.
     expect(Math.abs((low as number) - lowHz)).toBeLessThan(0.05);
@@ -72,12 +60,12 @@ describe("averageSpectrum", () => {
   it.each([
     [69, 440],
     [60, 261.6256],
-  ])("finds note %d at %d Hz within 0.05 Hz", (note, hertz) => {
+  ])('finds note %d at %d Hz within 0.05 Hz', (note, hertz) => {
     const [peak] = highestPeaksHz(tones([440 * 2 ** ((note - 69) / 12)], 4), 1);
     expect(Math.abs((peak as number) - hertz)).toBeLessThan(0.05);
   });
 
-  it("windows a signal shorter than the transform over its real length", () => {
+  it('windows a signal shorter than the transform over its real length', () => {
     const [peak] = highestPeaksHz(tones([1000], 0.25), 1);
     expect(Math.abs((peak as number) - 1000)).toBeLessThan(0.5);
   });
