@@ -10,6 +10,8 @@ interface Props {
 /** The shown range as a table. Of more rows than anyone reads, each stretch gives its highest. */
 export function ColumnTable({ caption, columns, range }: Props) {
   return (
+    // What scrolls must be reachable by keys.
+    // eslint-disable-next-line jsx-a11y/no-noninteractive-tabindex -- scrolling is the interaction
     <div className="max-h-80 overflow-auto" tabIndex={0} role="region" aria-label={`${caption}, as a table`}>
       <table className="figures text-small">
         <caption className="sr-only">{caption}</caption>

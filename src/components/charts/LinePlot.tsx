@@ -60,7 +60,7 @@ export function LinePlot(props: Props) {
         onKeyDown={(event) => {
           if (plot.current && pressChartKey(plot.current, event, { row, home, onPick })) event.preventDefault();
         }}
-        className={onPick === undefined ? 'cursor-crosshair' : 'cursor-pointer'}
+        className={`-outline-offset-2 ${onPick === undefined ? 'cursor-crosshair' : 'cursor-pointer'}`}
       >
         <div ref={box} style={{ height: `${String(heightPx)}px` }} />
       </div>

@@ -66,7 +66,7 @@ export function SpeedLine(props: Props) {
           y1={LINE_Y}
           y2={LINE_Y - tickHeight(score)}
           className={isSame(shaftSpeedRpm, chosenRpm) ? 'stroke-copper' : 'stroke-ink'}
-          strokeWidth={isSame(shaftSpeedRpm, chosenRpm) ? 4 : 1.5}
+          strokeWidth={isSame(shaftSpeedRpm, chosenRpm) ? 4 : 2}
         />
       ))}
       {chosenRpm !== null && (

@@ -13,7 +13,7 @@ const TICK_SPACE_X_PX = 70;
 const TICK_SPACE_Y_PX = 40;
 
 const tickTexts: uPlot.Axis.DynamicValues = (_, values) =>
-  values.map((value) => (value === null ? '' : thinSpaced(String(Number(value.toPrecision(6))).replace('-', '−'))));
+  values.map((value) => thinSpaced(String(Number(value.toPrecision(6))).replace('-', '−')));
 
 /** What all line charts share: thin lines, hairline grid, no cursor lines, one dot for the read-out. */
 export function basePlotOptions(colours: ChartColours): Pick<uPlot.Options, 'axes' | 'cursor' | 'legend' | 'padding'> {

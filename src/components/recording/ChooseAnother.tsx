@@ -6,6 +6,7 @@ import { numberText } from '#lib/format/numberText.ts';
 import { parseNumber } from '#lib/format/parseNumber.ts';
 import { reviewRequest, type ReviewRequest } from '#lib/schemas/reading.ts';
 import type { RecordingView } from '#lib/schemas/recording.ts';
+import { isSameSpeed } from './rivals.ts';
 import { useShownSpeed } from './shownSpeed.ts';
 
 interface Props {
@@ -18,11 +19,18 @@ interface Props {
 const OTHER = 'other';
 const NOTHING = 'nothing';
 
+/** What someone looked at before is what they are likely to choose. */
+function choiceOf(shownRpm: number | null, candidates: readonly { rpm: number }[]): string {
+  if (shownRpm === null) return '';
+  const index = candidates.findIndex(({ rpm }) => isSameSpeed(rpm, shownRpm));
+  return index < 0 ? OTHER : String(index);
+}
+
 /** Another speed than the machine's: a candidate, a typed one, or nothing at all, with the reason. */
 export function ChooseAnother({ recording, isBusy, onReview, onCancel }: Props) {
   const shownRpm = useShownSpeed();
   const candidates = recording.reading?.candidates ?? [];
-  const [choice, setChoice] = useState(shownRpm === null ? '' : OTHER);
+  const [choice, setChoice] = useState(() => choiceOf(shownRpm, candidates));
   const [typedRpm, setTypedRpm] = useState(shownRpm === null ? '' : numberText(shownRpm, 1));
   const [reason, setReason] = useState('');
   const [error, setError] = useState<string>();

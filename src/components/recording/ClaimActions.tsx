@@ -76,7 +76,9 @@ export function ClaimActions({ recording }: Props) {
         />
       )}
       {(review?.decision === 'record-again' || recording.status === 'failed') && (
-        <ButtonLink href={recordAgainHref(recording)}>Add the new recording</ButtonLink>
+        <ButtonLink href={recordAgainHref(recording)}>
+          {recording.status === 'failed' ? 'Record again' : 'Add the new recording'}
+        </ButtonLink>
       )}
       {error !== null && (
         <Notice shape="outside" title="Not saved">

@@ -7,6 +7,7 @@ import type { RecordingView } from '#lib/schemas/recording.ts';
 import { eventsSentence, wrongCountTexts } from './eventsWords.ts';
 import {
   confidenceWords,
+  firstChanceWords,
   failureAdvice,
   MOTION_WORDS,
   NO_ROTATION_EXPLANATIONS,
@@ -73,7 +74,7 @@ function Unsure({ recording }: Props) {
         </StateMark>
       </p>
       <p className="max-w-sentence text-lead">
-        {confidenceWords(recording.reading?.confidence ?? 0)}. {UNSURE_ADVICE}
+        {firstChanceWords(recording.reading?.confidence ?? 0)} {UNSURE_ADVICE}
       </p>
       <Warnings recording={recording} />
     </>

@@ -29,7 +29,7 @@ export function OneTurn({ recording }: Props) {
 function LiveOneTurn({ initial }: { initial: RecordingView }) {
   const recording = useRecording(initial);
   const { reading } = recording;
-  if (reading === null || !reading.seriesNames.includes('oneTurnAverage')) return null;
+  if (!reading?.seriesNames.includes('oneTurnAverage')) return null;
   return (
     <Section
       title="One turn"

@@ -59,6 +59,7 @@ function LiveProof({ initial }: { initial: RecordingView }) {
             reading={reading}
             rpm={rpm}
             answerRpm={answerRpm}
+            isMoved={shownRpm !== null}
             fileName={recording.fileName}
           />
         )}
@@ -71,8 +72,10 @@ function bestView({ eventsPerTurn }: ReadingView, rpm: number | null): ViewName 
   return rpm !== null && eventHertzFromRpm(rpm, eventsPerTurn) < LOWEST_TONE_HZ ? 'envelopeSpectrum' : 'spectrum';
 }
 
-function sentenceOf({ status }: ReadingView): string {
+function sentenceOf({ status, candidates }: ReadingView): string {
   return status === 'measured'
     ? 'If the speed is right, the sound has a line at every tooth of the rack.'
-    : 'No rack fits this sound well; the one shown is the best of the candidates.';
+    : candidates.length > 0
+      ? 'No rack fits this sound well; the one shown is the best of the candidates.'
+      : 'No speed fits this sound well enough to hold a rack against it.';
 }

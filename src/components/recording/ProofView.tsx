@@ -6,7 +6,6 @@ import type { ReadingView, SeriesView } from '#lib/schemas/reading.ts';
 import { eventHertzFromRpm } from '#lib/units/rotation.ts';
 import { proofReasons } from './proofReasons.ts';
 import { RackSpeed } from './RackSpeed.tsx';
-import { isSameSpeed } from './rivals.ts';
 import { fullColumn, gapColumn } from './seriesColumns.ts';
 import { showSpeed } from './shownSpeed.ts';
 
@@ -17,11 +16,13 @@ interface Props {
   /** The speed that the rack stands for; null when there is no candidate at all. */
   readonly rpm: number | null;
   readonly answerRpm: number | null;
+  /** Someone holds the rack somewhere else than at the reading. */
+  readonly isMoved: boolean;
   readonly fileName: string;
 }
 
 /** One spectrum with its rack, 8 columns, and the reasons that it gives, 4 columns. */
-export function ProofView({ series, viewName, reading, rpm, answerRpm, fileName }: Props) {
+export function ProofView({ series, viewName, reading, rpm, answerRpm, isMoved, fileName }: Props) {
   const [marked, setMarked] = useState<readonly number[] | null>(null);
   const isOrder = series.name === 'orderSpectrum';
   const unit = isOrder ? 'orders' : 'Hz';
@@ -46,7 +47,7 @@ export function ProofView({ series, viewName, reading, rpm, answerRpm, fileName 
           levelDecibels={levels}
           toothSpacing={spacing}
           homeSpacing={homeRpm === null ? null : spacingAt(homeRpm)}
-          isAnswer={rpm !== null && answerRpm !== null && isSameSpeed(rpm, answerRpm)}
+          isAnswer={answerRpm !== null && !isMoved}
           markedTeeth={marked}
           rackMeaning={
             spacing === null ? '' : `A tooth every ${numberText(spacing, 1)} ${unit}, ${numberText(rpm ?? 0, 0)} rpm`
@@ -57,7 +58,7 @@ export function ProofView({ series, viewName, reading, rpm, answerRpm, fileName 
         />
       </div>
       <div className="grid content-start gap-4 desk:col-span-4">
-        {rpm !== null && <RackSpeed rpm={rpm} answerRpm={answerRpm} eventsPerTurn={reading.eventsPerTurn} />}
+        {rpm !== null && <RackSpeed rpm={rpm} isMoved={isMoved} eventsPerTurn={reading.eventsPerTurn} />}
         <ul className="grid gap-1">
           {reasons.map(({ text, teeth }) => (
             <li key={text}>

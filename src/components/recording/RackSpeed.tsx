@@ -5,20 +5,18 @@ import { numberText } from '#lib/format/numberText.ts';
 import { parseNumber } from '#lib/format/parseNumber.ts';
 import { shaftSpeedRpm } from '#lib/schemas/fields.ts';
 import { eventHertzFromRpm } from '#lib/units/rotation.ts';
-import { isSameSpeed } from './rivals.ts';
 import { showSpeed } from './shownSpeed.ts';
 
 interface Props {
   readonly rpm: number;
-  readonly answerRpm: number | null;
+  readonly isMoved: boolean;
   readonly eventsPerTurn: number;
 }
 
 /** Where the rack stands, to read and to type; and its way back to the reading. */
-export function RackSpeed({ rpm, answerRpm, eventsPerTurn }: Props) {
+export function RackSpeed({ rpm, isMoved, eventsPerTurn }: Props) {
   const [typed, setTyped] = useState<string | null>(null);
   const parsed = typed === null ? null : shaftSpeedRpm.safeParse(parseNumber(typed));
-  const isMoved = answerRpm !== null && !isSameSpeed(rpm, answerRpm);
   const set = () => {
     if (parsed?.success) showSpeed(parsed.data);
     if (parsed === null || parsed.success) setTyped(null);

@@ -14,9 +14,17 @@ export const MOTION_WORDS: Record<Motion, string> = {
 
 /** How far a reading can be trusted, in words and as a count: "Very likely right (97 in 100)". */
 export function confidenceWords(confidence: number): string {
-  // 100 in 100 would be a promise.
-  const count = Math.min(IN_A_HUNDRED - 1, Math.round(confidence * IN_A_HUNDRED));
-  return `${trustWords(confidence)} (${String(count)} in 100)`;
+  return `${trustWords(confidence)} (${countInHundred(confidence)} in 100)`;
+}
+
+/** How far the first of several candidates can be trusted. */
+export function firstChanceWords(confidence: number): string {
+  return `The first is right in about ${countInHundred(confidence)} of 100 such recordings.`;
+}
+
+/** 100 in 100 would be a promise. */
+function countInHundred(confidence: number): string {
+  return String(Math.min(IN_A_HUNDRED - 1, Math.round(confidence * IN_A_HUNDRED)));
 }
 
 function trustWords(confidence: number): string {

@@ -36,6 +36,9 @@ export function whyNotTexts({ candidates, settings }: ReadingView, chosenRpm: nu
 
 function weightText(rival: Candidate | undefined, chosen: Candidate | undefined): string {
   if (rival === undefined) return ' explains too few lines to be a candidate.';
+  if (chosen !== undefined && rival.score > chosen.score) {
+    return ` weighs more, ${numberText(rival.score, 2)} against ${numberText(chosen.score, 2)}: ${lowered(rival.reason)}`;
+  }
   const isWeaker = chosen !== undefined && rival.score < chosen.score * CLEARLY_WEAKER_SCORE;
   if (isWeaker)
     return ` weighs ${numberText(rival.score, 2)} against ${numberText(chosen.score, 2)}: ${lowered(rival.reason)}`;

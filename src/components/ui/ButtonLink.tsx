@@ -6,6 +6,10 @@ interface Props extends ComponentProps<'a'> {
 }
 
 /** A link that looks like a button: it goes somewhere, it changes nothing. */
-export function ButtonLink({ weight = 'plain', className, ...rest }: Props) {
-  return <a className={buttonClasses(weight, className)} {...rest} />;
+export function ButtonLink({ weight = 'plain', className, children, ...rest }: Props) {
+  return (
+    <a className={buttonClasses(weight, className)} {...rest}>
+      {children}
+    </a>
+  );
 }

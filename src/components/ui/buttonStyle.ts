@@ -4,7 +4,7 @@ export type ButtonWeight = 'main' | 'plain' | 'word';
 const SHAPES: Record<ButtonWeight, string> = {
   main: 'rounded-edge border-2 border-ink bg-sheet px-4 font-bold',
   plain: 'rounded-edge border border-control bg-sheet px-4 hover:border-ink',
-  word: 'px-1 underline underline-offset-4 hover:decoration-2',
+  word: 'underline underline-offset-4 hover:decoration-2',
 };
 
 /** Classes of a button; the same for a link that looks like one. Ink on sheet, never copper. */
