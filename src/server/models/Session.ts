@@ -46,10 +46,12 @@ export class Session extends Model<InferAttributes<Session>, InferCreationAttrib
   /** Newest first, after the cursor of an earlier page. */
   static async listByBenches(
     benchIds: readonly string[],
-    { limit, cursor }: { limit: number; cursor: string | undefined },
+    { limit, cursor, purpose }: { limit: number; cursor: string | undefined; purpose?: SessionPurpose | undefined },
   ): Promise<SessionWithBuildAndCreator[]> {
     const sessions = await Session.findAll({
-      where: { [Op.and]: [{ benchId: [...benchIds] }, afterCursor(cursor)] },
+      where: {
+        [Op.and]: [{ benchId: [...benchIds] }, ...(purpose === undefined ? [] : [{ purpose }]), afterCursor(cursor)],
+      },
       include: BUILD_AND_CREATOR,
       order: NEWEST_FIRST,
       limit,
