@@ -27,7 +27,7 @@ const RECONCILE_SECONDS = 3;
 const SWEEP_SECONDS = 3600;
 const FIRST_SWEEP_SECONDS = 60;
 /** Most analyses are done by then; a longer one goes back into the queue. */
-const STOP_GRACE_SECONDS = 5;
+const STOP_GRACE_SECONDS = 3;
 
 async function reconcile(): Promise<void> {
   await requeueExpired();
@@ -87,3 +87,5 @@ async function main(): Promise<void> {
 }
 
 await main();
+// BullMQ keeps timers and sockets for half a minute when it is closed while it is still connecting.
+process.exit();

@@ -99,6 +99,11 @@ export class WorkerLab {
     return `redis://127.0.0.1:${String(this.#redisPort)}/0`;
   }
 
+  get redis(): LabProcess {
+    if (this.#redis === null) throw new Error('The Redis of the lab is stopped.');
+    return this.#redis;
+  }
+
   async startRedis(): Promise<void> {
     const programArguments = ['--port', String(this.#redisPort), '--bind', '127.0.0.1', '--save', ''];
     this.#redis = this.#start('redis-server', [...programArguments, '--maxmemory-policy', 'noeviction'], process.env);
