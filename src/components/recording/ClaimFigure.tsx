@@ -20,6 +20,8 @@ interface Props {
   readonly recording: RecordingView;
 }
 
+const NO_BREAK_SPACE = '\u00a0';
+
 /** The biggest thing on the page: the figure with its interval and its meaning, or the words in its place. */
 export function ClaimFigure({ recording }: Props) {
   const { status, reading, review } = recording;
@@ -43,7 +45,7 @@ function Measured({ recording, speed }: Props & { speed: NonNullable<ReturnType<
     <>
       <h1 className="figure-mark figures text-figure leading-none font-normal">
         <GroupedText text={text.value} />
-        <span className="ml-3 font-sans text-title">rpm</span>
+        <span className="ml-1 font-sans text-title">{NO_BREAK_SPACE}rpm</span>
       </h1>
       <p className="text-title">
         between <GroupedText text={text.low} /> and <GroupedText text={text.high} />{' '}

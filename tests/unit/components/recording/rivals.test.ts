@@ -1,0 +1,50 @@
+import { describe, expect, it } from 'vitest';
+import { relationOf, whyNotTexts } from '#components/recording/rivals.ts';
+import { readingView } from '#tests/factories/recordingView.ts';
+
+describe('relationOf', () => {
+  it.each([
+    [2874, 'chosen'],
+    [2890, 'chosen'],
+    [1437, 'half'],
+    [5748, 'double'],
+    [958, null],
+  ])('calls %i rpm %s beside 2874 rpm', (rpm, relation) => {
+    expect(relationOf(rpm, 2874)).toBe(relation);
+  });
+});
+
+describe('whyNotTexts', () => {
+  it('weighs half against the chosen speed and says that double is no candidate', () => {
+    const candidates = [
+      { rpm: 2874, score: 0.91, reason: 'All lines stand out.' },
+      { rpm: 1437, score: 0.4, reason: 'Every second line is missing.' },
+    ];
+    expect(whyNotTexts(readingView({ candidates }), 2874)).toEqual([
+      'Half (1437 rpm) weighs 0.40 against 0.91: every second line is missing.',
+      'Double (5748 rpm) explains too few lines to be a candidate.',
+    ]);
+  });
+
+  it('says that half stays possible when it weighs nearly as much', () => {
+    const candidates = [
+      { rpm: 2874, score: 0.5, reason: 'A.' },
+      { rpm: 1437, score: 0.48, reason: 'B.' },
+    ];
+    expect(whyNotTexts(readingView({ candidates }), 2874)[0]).toContain('stays possible with a weight of 0.48');
+  });
+
+  it('says that double weighs more when someone looks at the weaker half', () => {
+    const candidates = [
+      { rpm: 2874, score: 0.91, reason: 'A.' },
+      { rpm: 1437, score: 0.4, reason: 'B.' },
+    ];
+    expect(whyNotTexts(readingView({ candidates }), 1437)[1]).toContain('weighs more, 0.91 against 0.40');
+  });
+
+  it('says when half lies outside the allowed range', () => {
+    const { settings } = readingView();
+    const reading = readingView({ settings: { ...settings, rpmMin: 2000 } });
+    expect(whyNotTexts(reading, 2874)[0]).toBe('Half (1437 rpm) lies outside the allowed range.');
+  });
+});
