@@ -1,6 +1,7 @@
 import { Readable } from 'node:stream';
-import type { ReadableStream as NodeReadableStream } from 'node:stream/web';
+import type { ReadableStream } from 'node:stream/web';
 import { ServerError } from '#server/errors.ts';
+import { linger } from './linger.ts';
 
 /** Above the longest note that any call takes, so that an overlong field is named instead of cut off. */
 export const JSON_BODY_MAXIMUM_BYTES = 2_000_000;
@@ -44,22 +45,30 @@ export function refuseContentEncoding(request: Request): void {
 }
 
 /** The raw body, up to the limit. @throws ServerError too-large */
-export async function readBytes(request: Request): Promise<Buffer> {
-  if (request.body === null) return Buffer.alloc(0);
+export async function readBytes({ body }: Request): Promise<Buffer> {
+  if (body === null) return Buffer.alloc(0);
+  const source = Readable.fromWeb(body as ReadableStream<Uint8Array>);
   const chunks: Uint8Array[] = [];
   let byteCount = 0;
-  for await (const chunk of Readable.fromWeb(
-    request.body as NodeReadableStream<Uint8Array>,
-  ) as AsyncIterable<Uint8Array>) {
-    byteCount += chunk.byteLength;
-    if (byteCount > JSON_BODY_MAXIMUM_BYTES) {
-      const limitMegabytes = JSON_BODY_MAXIMUM_BYTES / 1e6;
-      throw new ServerError({
-        code: 'too-large',
-        detail: `The body is above ${String(limitMegabytes)} MB.`,
-      });
-    }
-    chunks.push(chunk);
-  }
-  return Buffer.concat(chunks);
+  return new Promise((resolve, reject) => {
+    source.on('data', (chunk: Uint8Array) => {
+      chunks.push(chunk);
+      byteCount += chunk.byteLength;
+      if (byteCount <= JSON_BODY_MAXIMUM_BYTES) return;
+      source.removeAllListeners('data');
+      linger(source);
+      reject(tooLarge());
+    });
+    source.once('end', () => {
+      resolve(Buffer.concat(chunks));
+    });
+    source.once('error', (cause) => {
+      reject(new ServerError({ code: 'bad-request', detail: 'The body ended before its end.', cause }));
+    });
+  });
+}
+
+function tooLarge(): ServerError {
+  const limitMegabytes = JSON_BODY_MAXIMUM_BYTES / 1e6;
+  return new ServerError({ code: 'too-large', detail: `The body is above ${String(limitMegabytes)} MB.` });
 }

@@ -3,9 +3,10 @@ import type { ReadableStream } from 'node:stream/web';
 import multer from 'multer';
 import { MAXIMUM_UPLOAD_BYTES } from '#lib/schemas/uploadLimits.ts';
 import { invalidFields, type ServerError } from '#server/errors.ts';
-import { requireFreeSpace } from '#server/storage/requireFreeSpace.ts';
+import { requireFreeSpace } from '#server/usecases/requireFreeSpace.ts';
 import type { BlobStorage } from '#server/storage/storage.ts';
 import type { ReceivedUpload } from '#server/usecases/receivedUpload.ts';
+import { linger } from './linger.ts';
 import type { FormTexts } from './upload/parseUploadFields.ts';
 import { PartHeaderFilter } from './upload/partHeaderFilter.ts';
 import { UploadEngine } from './upload/UploadEngine.ts';
@@ -16,8 +17,6 @@ const FIELD_MAXIMUM_COUNT = 24;
 const FIELD_NAME_MAXIMUM_BYTES = 100;
 /** Room for the text fields and part headers around a file of the largest size. */
 const FORM_MAXIMUM_BYTES = MAXIMUM_UPLOAD_BYTES + FIELD_MAXIMUM_COUNT * FIELD_MAXIMUM_BYTES;
-/** How long a refused client may go on sending, so that it reads the refusal instead of a broken connection. */
-const LINGER_SECONDS = 10;
 
 interface ReceiveUploadOptions {
   readonly storage: BlobStorage;
@@ -141,15 +140,4 @@ function requireFittingLength(request: Request): number {
   const declaredBytes = Number(request.headers.get('content-length') ?? 0);
   if (!(declaredBytes <= FORM_MAXIMUM_BYTES)) throw tooLarge();
   return declaredBytes;
-}
-
-/** Throws away what still comes, for a while, then ends the connection. */
-function linger(source: Readable): void {
-  const timer = setTimeout(() => source.destroy(), LINGER_SECONDS * 1000);
-  timer.unref();
-  source.once('close', () => {
-    clearTimeout(timer);
-  });
-  source.on('error', () => undefined);
-  source.resume();
 }
