@@ -89,7 +89,7 @@ const server = createServer((request, response) => {
   }
   rememberEventStream(response);
   const render = () => {
-    Promise.resolve(handler(request, response)).catch((error) => {
+    Promise.resolve(handler(request, response, undefined, { nodeResponse: response })).catch((error) => {
       process.stderr.write(`${error?.stack ?? error}\n`);
       sendProblem(response, 500, 'internal', 'Something went wrong here. Try again; if it stays, tell your bench owner.');
     });

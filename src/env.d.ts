@@ -8,6 +8,8 @@ declare namespace App {
     /** The sign-in that the cookie belongs to; null for tokens and for nobody. */
     authSession: import('#server/auth/authSessions.ts').CurrentAuthSession | null;
     theme: 'light' | 'dark' | 'system';
+    /** The answer on the wire, to wait for slow readers; absent in the development server. */
+    nodeResponse?: import('node:http').ServerResponse;
     /** What went wrong, for the page that tells it. */
     problem?: import('#lib/schemas/problem.ts').ProblemBody;
   }

@@ -18,6 +18,22 @@ export class ReadingSeries extends Model<InferAttributes<ReadingSeries>, InferCr
   declare name: SeriesName;
   declare columnsLayout: StoredColumn[];
   declare payload: Buffer;
+
+  /** Which series each of these readings has, in the order of SERIES_NAMES; a reading without any is absent. */
+  static async listNamesByReadings(
+    benchIds: readonly string[],
+    readingIds: readonly string[],
+  ): Promise<Map<string, SeriesName[]>> {
+    if (readingIds.length === 0) return new Map();
+    const rows = await ReadingSeries.findAll({
+      attributes: ['readingId', 'name'],
+      where: { benchId: [...benchIds], readingId: [...readingIds] },
+    });
+    const isOf = new Set(rows.map(({ readingId, name }) => `${readingId} ${name}`));
+    return new Map(
+      rows.map(({ readingId }) => [readingId, SERIES_NAMES.filter((name) => isOf.has(`${readingId} ${name}`))]),
+    );
+  }
 }
 
 ReadingSeries.init(

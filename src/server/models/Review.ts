@@ -23,7 +23,27 @@ export class Review extends Model<InferAttributes<Review>, InferCreationAttribut
   declare reason: string;
   declare createdAt: CreationOptional<Date>;
   declare reviewer?: NonAttribute<Account>;
+
+  /** Of each of these readings the review that counts, by the id of the reading. */
+  static async listNewestByReadings(
+    benchIds: readonly string[],
+    readingIds: readonly string[],
+  ): Promise<Map<string, ReviewWithReviewer>> {
+    if (readingIds.length === 0) return new Map();
+    const reviews = await Review.findAll({
+      where: { benchId: [...benchIds], readingId: [...readingIds] },
+      include: [{ association: 'reviewer', attributes: ['id', 'name'], required: true }],
+      order: [
+        ['createdAt', 'ASC'],
+        ['id', 'ASC'],
+      ],
+    });
+    // Later entries take the place of earlier ones.
+    return new Map(reviews.map((review) => [review.readingId, review as ReviewWithReviewer]));
+  }
 }
+
+export type ReviewWithReviewer = Review & { reviewer: Account };
 
 Review.init(
   {

@@ -36,11 +36,6 @@ const CONTRIBUTES = {
   access: 'write',
   ability: 'contribute',
 } as const satisfies Rule;
-const REVIEWS = {
-  audience: 'account',
-  access: 'write',
-  ability: 'review',
-} as const satisfies Rule;
 const WORKER = { audience: 'worker', access: 'write' } as const satisfies Rule;
 
 export const POLICY_TABLE = {
@@ -82,7 +77,7 @@ export const POLICY_TABLE = {
   'POST /api/v1/recordings/[id]/readings': CONTRIBUTES,
   'GET /api/v1/recordings/[id]/playback': ACCOUNT_READS,
   'GET /api/v1/recordings/[id]/original': ACCOUNT_READS,
-  'POST /api/v1/readings/[id]/reviews': REVIEWS,
+  'POST /api/v1/readings/[id]/reviews': CONTRIBUTES,
   'GET /api/v1/readings/[id]/series/[name]': ACCOUNT_READS,
   'GET /api/v1/updates': ACCOUNT_READS,
 

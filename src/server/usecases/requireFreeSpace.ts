@@ -1,7 +1,7 @@
 import { byteText } from '#lib/format/byteText.ts';
 import { settings } from '../env.ts';
-import { storageFull } from './storageError.ts';
-import type { BlobStorage } from './storage.ts';
+import { storageFull } from '../storage/storageError.ts';
+import type { BlobStorage } from '../storage/storage.ts';
 
 const MINIMUM_FREE_FRACTION = 0.05;
 
