@@ -34,7 +34,11 @@ await runCommand(async () => {
   };
   await restartWorker();
   const astro = join(PROJECT_FOLDER, 'node_modules/astro/astro.js');
-  const web = startProcess('web server', [astro, 'dev', '--host', instance.host, '--port', String(instance.port)], options);
+  const web = startProcess(
+    'web server',
+    [astro, 'dev', '--host', instance.host, '--port', String(instance.port)],
+    options,
+  );
 
   let timer;
   const watchers = WORKER_SOURCES.map((folder) =>

@@ -1,16 +1,19 @@
 import astro from 'eslint-plugin-astro';
 import jsxA11y from 'eslint-plugin-jsx-a11y';
 import reactHooks from 'eslint-plugin-react-hooks';
+import { defineConfig } from 'eslint/config';
 import tseslint from 'typescript-eslint';
 
 const restricted = (message, ...group) => ({ 'no-restricted-imports': ['error', { patterns: [{ group, message }] }] });
 
-export default tseslint.config(
+export default defineConfig(
   { ignores: ['**/dist/', '**/.data*/', '**/.astro/', '**/node_modules/'] },
   {
     files: ['**/*.{ts,tsx}'],
     extends: [tseslint.configs.strictTypeChecked, tseslint.configs.stylisticTypeChecked],
-    languageOptions: { parserOptions: { projectService: true, tsconfigRootDir: new URL('..', import.meta.url).pathname } },
+    languageOptions: {
+      parserOptions: { projectService: true, tsconfigRootDir: new URL('..', import.meta.url).pathname },
+    },
     rules: {
       '@typescript-eslint/consistent-type-definitions': ['error', 'interface'],
       '@typescript-eslint/switch-exhaustiveness-check': 'error',
@@ -29,7 +32,10 @@ export default tseslint.config(
     files: ['src/lib/**/*.ts'],
     rules: {
       'no-restricted-globals': ['error', 'Date', 'performance', 'process', 'window', 'document', 'crypto'],
-      'no-restricted-properties': ['error', { object: 'Math', property: 'random', message: 'Pass a seeded generator in.' }],
+      'no-restricted-properties': [
+        'error',
+        { object: 'Math', property: 'random', message: 'Pass a seeded generator in.' },
+      ],
       ...restricted('src/lib is pure: no Node, no server, no client.', 'node:*', '#server/*', '#client/*', '#http/*'),
     },
   },
@@ -37,7 +43,12 @@ export default tseslint.config(
   ...astro.configs['flat/jsx-a11y-recommended'],
   {
     files: ['**/*.astro'],
-    rules: restricted('Pages call use cases and presenters only.', '#server/models/*', '#server/database/*', '#worker/*'),
+    rules: restricted(
+      'Pages call use cases and presenters only.',
+      '#server/models/*',
+      '#server/database/*',
+      '#worker/*',
+    ),
   },
   {
     files: ['src/server/**/*.ts', 'worker/**/*.ts'],

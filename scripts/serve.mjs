@@ -35,7 +35,14 @@ function sendProblem(response, status, code, detail, headers = {}) {
     response.destroy();
     return;
   }
-  const body = JSON.stringify({ type: `urn:ripplebench:problem:${code}`, title: detail, status, code, detail, requestId: '' });
+  const body = JSON.stringify({
+    type: `urn:ripplebench:problem:${code}`,
+    title: detail,
+    status,
+    code,
+    detail,
+    requestId: '',
+  });
   response.writeHead(status, { 'Content-Type': 'application/problem+json', Connection: 'close', ...headers });
   response.end(body);
 }
@@ -72,7 +79,9 @@ function rememberEventStream(response) {
 
 const server = createServer((request, response) => {
   if (isStopping) {
-    sendProblem(response, 503, 'shutting-down', 'The server is restarting. Try again in a moment.', { 'Retry-After': '5' });
+    sendProblem(response, 503, 'shutting-down', 'The server is restarting. Try again in a moment.', {
+      'Retry-After': '5',
+    });
     return;
   }
   if (!trustsProxy) {
@@ -91,7 +100,12 @@ const server = createServer((request, response) => {
   const render = () => {
     Promise.resolve(handler(request, response, undefined, { nodeResponse: response })).catch((error) => {
       process.stderr.write(`${error?.stack ?? error}\n`);
-      sendProblem(response, 500, 'internal', 'Something went wrong here. Try again; if it stays, tell your bench owner.');
+      sendProblem(
+        response,
+        500,
+        'internal',
+        'Something went wrong here. Try again; if it stays, tell your bench owner.',
+      );
     });
   };
   if (request.method === 'GET' || request.method === 'HEAD') serveStatic(request, response, render);

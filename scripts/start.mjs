@@ -9,7 +9,9 @@ const LOOPBACK_HOSTS = ['127.0.0.1', '::1', 'localhost'];
 
 function refuseDemoInPublic({ demo, host }) {
   if (demo === 'on' && !LOOPBACK_HOSTS.includes(host)) {
-    throw new SetupError('RIPPLEBENCH_DEMO=on has well-known passwords: it is refused unless HOST is a loopback address.');
+    throw new SetupError(
+      'RIPPLEBENCH_DEMO=on has well-known passwords: it is refused unless HOST is a loopback address.',
+    );
   }
 }
 

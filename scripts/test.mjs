@@ -60,7 +60,11 @@ await runCommand(async () => {
   try {
     application = await startApplication(instance, { logTo: openSync(log, 'a') });
     for (const signal of ['SIGINT', 'SIGTERM']) process.once(signal, () => void application.stop());
-    const env = { ...application.env, RIPPLEBENCH_TEST_URL: application.url, RIPPLEBENCH_TEST_BUILD: application.nodeFolder };
+    const env = {
+      ...application.env,
+      RIPPLEBENCH_TEST_URL: application.url,
+      RIPPLEBENCH_TEST_BUILD: application.nodeFolder,
+    };
     const counts = { passed: 0, failed: 0 };
     for (const kind of kinds) {
       const result = await runTests(kind, env, runnerArguments);

@@ -6,7 +6,16 @@ import { PROJECT_FOLDER } from './instance.mjs';
 import { run } from './run.mjs';
 
 const BUILDS_FOLDER = join(PROJECT_FOLDER, 'dist');
-const SOURCES = ['src', 'worker', 'scripts', 'public', 'astro.config.mjs', 'package.json', 'package-lock.json', 'tsconfig.json'];
+const SOURCES = [
+  'src',
+  'worker',
+  'scripts',
+  'public',
+  'astro.config.mjs',
+  'package.json',
+  'package-lock.json',
+  'tsconfig.json',
+];
 const KEPT_BUILD_COUNT = 3;
 
 /** Entry of the bundle → source; the worker finds its thread beside itself. */
