@@ -14,6 +14,6 @@ const CLEAR_EXCESS = 1.5;
  */
 export function confidenceOf(best: RankedHypothesis): number {
   const strength = Math.min(1, 0.5 + (0.5 * (significance(best) - LEAST_SIGNIFICANCE)) / CLEAR_EXCESS);
-  const calm = 1 / (1 + best.family.quality.roughness);
+  const calm = 1 / (1 + best.family.quality.restlessness);
   return Math.max(0, Math.min(HIGHEST_CONFIDENCE, best.probability * strength * calm));
 }

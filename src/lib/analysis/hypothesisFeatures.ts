@@ -20,8 +20,10 @@ export interface DomainFeatures extends PeakMatch {
   readonly hitFraction: number;
   /** How far every second (third …) event order stands above the others: evidence that the rate is too low, [0, 6]. */
   readonly eventAlternation: number;
-  /** The same among all shaft orders: only even ones sounding means that the shaft turns twice as fast, [0, 6]. */
+  /** The same among the shaft orders between events: only even ones sounding means that the shaft turns twice as fast, [0, 6]. */
   readonly shaftAlternation: number;
+  /** How far event orders stand above the shaft orders between them: events taken for mere unevenness do not, [−6, 6]. */
+  readonly eventContrast: number;
   /** Lines between the events that no division of the turn explains: evidence that the rate is too high, [0, 6]. */
   readonly strayLevel: number;
   /** Lines half way (or at thirds) between shaft orders, with more than one event a turn: the same evidence, [0, 6]. */
@@ -50,6 +52,7 @@ const NO_EVIDENCE: DomainFeatures = {
   hitFraction: 0,
   eventAlternation: 0,
   shaftAlternation: 0,
+  eventContrast: 0,
   strayLevel: 0,
   strayShaftLevel: 0,
   unexplainedShare: 0,
@@ -74,20 +77,49 @@ export function domainFeatures(
     .map((order) => lineLevel(spectrum, (order * ratio) / eventsPerTurn))
     .filter(Number.isFinite);
   if (!events.some(Number.isFinite) && expected.length === 0) return NO_EVIDENCE;
-  const shaftLevels = Array.from({ length: hasShaftOrders ? MOST_SHAFT_ORDERS : 0 }, (_, index) =>
-    lineLevel(spectrum, (index + 1) * shaft),
-  );
+  const shaftOrders = hasShaftOrders ? shaftOrderLevels(spectrum, shaft, eventsPerTurn) : [];
+  const between = shaftOrders.filter(({ isEvent }) => !isEvent);
   const shaftComb = { spacing: shaft, divisors: SHAFT_PRIMES, firstTooth: 0, toothCount: STRAY_SHAFT_ORDERS };
+  const numbered = events.map((level, index) => ({ order: index + first, level }));
   return {
     eventLevel: weightedLevel(events, expected),
     hitFraction: soundingFraction(events.slice(0, HIT_ORDERS)),
-    eventAlternation: alternation(events, first),
-    shaftAlternation: alternation(shaftLevels, 1),
+    eventAlternation: alternation(numbered),
+    shaftAlternation: alternation(between),
+    eventContrast: eventContrast(shaftOrders),
     strayLevel: strayLevel(spectrum, hypothesis, first),
     strayShaftLevel: hasShaftOrders ? levelBetween(spectrum, shaftComb) : 0,
-    shaftShare: shaftShare(shaftLevels, eventsPerTurn),
+    shaftShare: soundingFraction(between.filter(({ order }) => order < 2 * eventsPerTurn).map(({ level }) => level)),
     ...matchPeaks(spectrum, peaks, { ratio, shaft, first }),
   };
+}
+
+interface NumberedLevel {
+  readonly order: number;
+  readonly level: number;
+}
+
+/** Levels of the lowest shaft orders that can be heard. */
+function shaftOrderLevels(
+  spectrum: OrderLevels,
+  shaft: number,
+  eventsPerTurn: number,
+): (NumberedLevel & { isEvent: boolean })[] {
+  return Array.from({ length: MOST_SHAFT_ORDERS }, (_, index) => index + 1)
+    .map((order) => ({
+      order,
+      level: lineLevel(spectrum, order * shaft),
+      isEvent: Number.isInteger(order / eventsPerTurn),
+    }))
+    .filter(({ level }) => Number.isFinite(level));
+}
+
+/** Mean level of event orders less that of the orders between them; 0 when one of the two cannot be heard. */
+function eventContrast(orders: readonly (NumberedLevel & { isEvent: boolean })[]): number {
+  const events = orders.filter(({ isEvent }) => isEvent).map(({ level }) => level);
+  const others = orders.filter(({ isEvent }) => !isEvent).map(({ level }) => level);
+  if (events.length === 0 || others.length === 0) return 0;
+  return Math.max(-LARGEST_DIFFERENCE, Math.min(LARGEST_DIFFERENCE, meanLevel(events) - meanLevel(others)));
 }
 
 function weightedLevel(events: readonly number[], expected: readonly number[]): number {
@@ -112,13 +144,13 @@ function soundingFraction(levels: readonly number[]): number {
   return heard.length === 0 ? 0 : heard.filter((level) => level > HIT_NEPERS).length / heard.length;
 }
 
-/** Largest difference, over small primes m, between the mean level of multiples of m and of the rest. */
-function alternation(levels: readonly number[], first: number): number {
+/** Largest difference, over small primes m, between the mean level of multiples of m and of the rest, [0, 6]. */
+function alternation(numbered: readonly NumberedLevel[]): number {
   let largest = 0;
   for (const prime of PRIMES) {
-    const multiples = meanLevel(levels.filter((_, index) => (index + first) % prime === 0));
-    const others = meanLevel(levels.filter((_, index) => (index + first) % prime !== 0));
-    largest = Math.max(largest, multiples - others);
+    const multiples = numbered.filter(({ order }) => order % prime === 0).map(({ level }) => level);
+    const others = numbered.filter(({ order }) => order % prime !== 0).map(({ level }) => level);
+    largest = Math.max(largest, meanLevel(multiples) - meanLevel(others));
   }
   return Math.min(LARGEST_DIFFERENCE, largest);
 }
@@ -164,9 +196,4 @@ function levelBetween(spectrum: OrderLevels, comb: Comb): number {
     }
   }
   return Math.min(LARGEST_DIFFERENCE, highest);
-}
-
-function shaftShare(levels: readonly number[], eventsPerTurn: number): number {
-  const belowSecondEvent = levels.slice(0, Math.ceil(2 * eventsPerTurn) - 1);
-  return soundingFraction(belowSecondEvent.filter((_, index) => !Number.isInteger((index + 1) / eventsPerTurn)));
 }

@@ -24,10 +24,10 @@ export const LEAST_SIGNIFICANCE = 2.4;
 const WEAKER_DOMAIN_WEIGHT = 0.5;
 /** Part of the line strength on mains multiples above which the whole comb is hum. */
 const HUM_SHARE = 0.8;
-/** Hum is as steady as the grid: 0.05 % within a recording. A motor that stands on a multiple of it moves more. */
-const HUM_SPREAD = 5e-4;
-/** Change of slope, cells a frame, above which no shaft with inertia makes the track. */
-const LARGEST_ROUGHNESS = 1.2;
+/** Hum is as steady as the grid; what a track of its weakened lines scatters stays below this. */
+const HUM_SPREAD = 5e-3;
+/** Change of slope, per cent a frame, above which no shaft with inertia makes the track. */
+const LARGEST_RESTLESSNESS = 1.2;
 /** Periods of the event rate that must fit into the recording. */
 const LEAST_EVENTS = 3;
 
@@ -53,7 +53,7 @@ function refusal(
   if (durationSeconds * best.family.trackedHz * best.ratio < LEAST_EVENTS) return 'too-short';
   if (hum && isHumAlone(best, hum, durationSeconds)) return 'hum';
   if (value < LEAST_SIGNIFICANCE) return 'nothing-periodic';
-  if (best.family.quality.roughness > LARGEST_ROUGHNESS) return 'speech';
+  if (best.family.quality.restlessness > LARGEST_RESTLESSNESS) return 'speech';
   return null;
 }
 

@@ -1,5 +1,6 @@
 import type { CombScores } from '#lib/signal/combScore.ts';
 import { trackFromCells } from '#lib/signal/eventTrack.ts';
+import type { EventTrack } from '#lib/signal/eventTrack.ts';
 import type { FrontEnd } from '#lib/signal/frontEnd.ts';
 import { cellShift } from '#lib/signal/logGrid.ts';
 import { orderPeaks, orderSpectra } from '#lib/signal/orderLevels.ts';
@@ -9,6 +10,7 @@ import type { RefinedTrack } from '#lib/signal/refineTrack.ts';
 import { steadyPath, trackPath } from '#lib/signal/trackPath.ts';
 import type { TrackPath } from '#lib/signal/trackPath.ts';
 import { median } from '#lib/statistics/quantiles.ts';
+import { PER_CENT } from '#lib/units/ratios.ts';
 import { ratioHypotheses } from './hypotheses.ts';
 
 /** A set of lines that move together: one source of sound, its true rate known up to a ratio. */
@@ -31,8 +33,8 @@ export interface FamilyQuality {
   readonly pathScore: number;
   /** Part of the time in which it is heard, [0, 1]. */
   readonly activeFraction: number;
-  /** Mean change of the path's slope from frame to frame, cells, each counted up to 6: shafts have inertia, voices and tunes have not. */
-  readonly roughness: number;
+  /** Mean change of the rate's slope from frame to frame, per cent, each counted up to 5: shafts have inertia, voices and tunes have not. */
+  readonly restlessness: number;
   /** Sum over the lines of coherent power over noise, on a logarithmic scale: 0 for noise. */
   readonly coherence: number;
 }
@@ -84,23 +86,27 @@ export function findSoundFamily(
   };
 }
 
-const LARGEST_CHANGE_CELLS = 6;
-
-function qualityOf(path: TrackPath, { lines }: RefinedTrack): FamilyQuality {
-  let change = 0;
-  let steps = 0;
-  for (let frame = 2; frame < path.cells.length; frame++) {
-    const [first, middle, last] = path.cells.subarray(frame - 2, frame + 1) as unknown as [number, number, number];
-    if (first < 0 || middle < 0 || last < 0) continue;
-    change += Math.min(LARGEST_CHANGE_CELLS, Math.abs(first - 2 * middle + last));
-    steps++;
-  }
+function qualityOf(path: TrackPath, { lines, track }: RefinedTrack): FamilyQuality {
   return {
     pathScore: path.meanScore,
     activeFraction: path.activeCount / Math.max(1, path.cells.length),
-    roughness: steps > 0 ? change / steps : 0,
+    restlessness: restlessness(track),
     coherence: Math.log1p(lines.reduce((sum, line) => sum + line.weight, 0)),
   };
+}
+
+const LARGEST_CHANGE_PERCENT = 5;
+
+function restlessness({ eventHz, isActive }: EventTrack): number {
+  let sum = 0;
+  let count = 0;
+  for (let knot = 2; knot < eventHz.length; knot++) {
+    if (!isActive[knot - 2] || !isActive[knot - 1] || !isActive[knot]) continue;
+    const [first, middle, last] = [eventHz[knot - 2] as number, eventHz[knot - 1] as number, eventHz[knot] as number];
+    sum += Math.min(LARGEST_CHANGE_PERCENT, PER_CENT * Math.abs(Math.log((first * last) / (middle * middle))));
+    count++;
+  }
+  return count > 0 ? sum / count : 0;
 }
 
 /** Cells to either side of a relative that are avoided with it. */

@@ -42,15 +42,32 @@ export function detectMainsHum(waveform: SampledSignal): MainsHum | null {
     FLOOR_REACH_BINS,
   );
   const reach = LOOK_BINS * Math.max(1, SPECTRUM_SIZE / waveform.samples.length);
-  let best: (MainsHum & { score: number }) | null = null;
+  let best: MainsComb | null = null;
   for (const nominalHz of NOMINAL_MAINS_HZ) {
     for (let deviation = -LARGEST_DEVIATION; deviation <= LARGEST_DEVIATION; deviation += DEVIATION_STEP) {
       const candidate = mainsComb(levels, nominalHz * (1 + deviation), binHz, reach);
-      if (candidate.harmonics.length >= FEWEST_HARMONICS && candidate.score > (best?.score ?? LEAST_SCORE))
-        best = candidate;
+      const isHum = candidate.harmonics.length >= FEWEST_HARMONICS && candidate.score > LEAST_SCORE;
+      if (isHum && candidate.strength > (best?.strength ?? 0)) best = candidate;
     }
   }
-  return best && countOtherLines(levels, best, binHz, reach) <= MOST_OTHER_LINES * best.harmonics.length ? best : null;
+  if (!best || countOtherLines(levels, best, binHz, reach) > MOST_OTHER_LINES * best.harmonics.length) return null;
+  return { mainsHz: fittedMainsHz(levels, best, binHz, reach), harmonics: best.harmonics };
+}
+
+/** Mains frequency through the peaks of all harmonics; high ones tell it more finely. */
+function fittedMainsHz(levels: Float32Array, hum: MainsHum, binHz: number, reach: number): number {
+  let sum = 0;
+  let weights = 0;
+  for (const harmonic of hum.harmonics) {
+    const centre = (harmonic * hum.mainsHz) / binHz;
+    let peak = Math.round(centre);
+    for (let bin = Math.ceil(centre - reach); bin <= Math.floor(centre + reach); bin++) {
+      if ((levels[bin] ?? -Infinity) > (levels[peak] ?? -Infinity)) peak = bin;
+    }
+    sum += harmonic * peak * binHz;
+    weights += harmonic * harmonic;
+  }
+  return sum / weights;
 }
 
 /** Lines off the mains grid, for each one on it, up to which the grid's lines are hum and no part of a denser comb. */
@@ -67,19 +84,28 @@ function countOtherLines(levels: Float32Array, hum: MainsHum, binHz: number, rea
   return count;
 }
 
-function mainsComb(levels: Float32Array, mainsHz: number, binHz: number, reach: number): MainsHum & { score: number } {
+interface MainsComb extends MainsHum {
+  /** Evidence, each line limited. */
+  readonly score: number;
+  /** Sum of the lines without limit, which is highest where they are met best. */
+  readonly strength: number;
+}
+
+function mainsComb(levels: Float32Array, mainsHz: number, binHz: number, reach: number): MainsComb {
   const harmonics: number[] = [];
   let score = 0;
+  let strength = 0;
   for (let harmonic = 1; harmonic <= MOST_HARMONICS; harmonic++) {
     const level = highestNear(levels, (harmonic * mainsHz) / binHz, reach);
     if (level > LINE_NEPERS) {
       harmonics.push(harmonic);
+      strength += level;
       score += Math.min(STRONGEST_NEPERS, level);
     } else {
       score -= MISSING_PENALTY;
     }
   }
-  return { mainsHz, harmonics, score };
+  return { mainsHz, harmonics, score, strength };
 }
 
 function highestNear(levels: Float32Array, centre: number, reach: number): number {

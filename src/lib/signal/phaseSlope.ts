@@ -51,7 +51,11 @@ export function phaseSlope(refined: RefinedTrack, firstBlock: number, endBlock: 
   const phases = new Float64Array(centres.length);
   for (const [index, centre] of centres.entries()) {
     const cycles = grid.firstCycle + centre * grid.cyclesPerBlock;
-    times[index] = secondsAt(cycles) - startSeconds;
+    times[index] = meanSeconds(
+      centre,
+      hop,
+      (block) => secondsAt(grid.firstCycle + (block + 0.5) * grid.cyclesPerBlock) - startSeconds,
+    );
     phases[index] = cycles + (offsets[index] as number);
   }
   return slopeOf(times, phases);
@@ -59,7 +63,8 @@ export function phaseSlope(refined: RefinedTrack, firstBlock: number, endBlock: 
 
 function slopeOf(times: Float64Array, phases: Float64Array): PhaseSlope {
   const line = linearRegression(times, phases);
-  const noise = noiseVariance(phases) ?? line.residualVariance;
+  const residuals = phases.map((phase, index) => phase - line.intercept - line.slope * (times[index] as number));
+  const noise = noiseVariance(residuals) ?? line.residualVariance;
   const variance = OVERLAP_VARIANCE * Math.min(line.residualVariance, 2 * noise + Number.MIN_VALUE);
   return {
     eventHz: line.slope,
@@ -121,12 +126,31 @@ function lineOffsets(line: WeightedLine, centres: readonly number[], hop: number
   return offsets.map((offset) => (offset - mean) / line.harmonic);
 }
 
+/**
+ * Time of a segment with the weights that its phase has. Where the track wriggles, the time in the middle is another,
+ * and the wriggle would enter the slope.
+ */
+function meanSeconds(centre: number, hop: number, secondsOf: (block: number) => number): number {
+  let sum = 0;
+  let weights = 0;
+  for (let block = centre - hop; block < centre + hop; block++) {
+    const weight = hannWeight(block, centre, hop);
+    sum += weight * secondsOf(block);
+    weights += weight;
+  }
+  return sum / weights;
+}
+
+function hannWeight(block: number, centre: number, hop: number): number {
+  return Math.cos((Math.PI * (block + 0.5 - centre)) / (2 * hop)) ** 2;
+}
+
 /** Hann-weighted sum of the blocks within ± hop of a centre. */
 function segmentAmplitude(line: WeightedLine, centre: number, hop: number): { real: number; imaginary: number } {
   let real = 0;
   let imaginary = 0;
   for (let block = centre - hop; block < centre + hop; block++) {
-    const weight = Math.cos((Math.PI * (block + 0.5 - centre)) / (2 * hop)) ** 2;
+    const weight = hannWeight(block, centre, hop);
     real += weight * (line.real[block] ?? 0);
     imaginary += weight * (line.imaginary[block] ?? 0);
   }
