@@ -10,11 +10,6 @@ import { AnalysisThread } from './threads/AnalysisThread.ts';
 /** How often an idle slot looks into the database when no bell rings. */
 const POLL_SECONDS = 2;
 
-/** Why the work on a claim was ended from outside. */
-class Interrupted extends Error {
-  override readonly name = 'Interrupted';
-}
-
 interface Slot {
   readonly bell: Bell;
   readonly threadEntry: URL;
@@ -56,7 +51,10 @@ interface Work {
 
 async function workOn(claim: RecordingClaim, { thread, leaseSeconds, giveUp }: Work): Promise<void> {
   const lost = new AbortController();
-  const letGo = keepClaim({ claim, leaseSeconds, onLost: () => lost.abort(new Interrupted('the claim was lost')) });
+  const onLost = (): void => {
+    lost.abort();
+  };
+  const letGo = keepClaim({ claim, leaseSeconds, onLost });
   try {
     await analyseRecording({ claim, thread, signal: AbortSignal.any([lost.signal, giveUp]) });
   } catch (error) {

@@ -34,22 +34,15 @@ async function reconcile(): Promise<void> {
   await ringUndelivered();
 }
 
-function askedToStop(): Promise<unknown> {
-  return Promise.race([once(process, 'SIGTERM'), once(process, 'SIGINT')]);
+interface DutiesOptions {
+  readonly workerId: string;
+  readonly threadCount: number;
+  readonly stopping: AbortSignal;
 }
 
-async function main(): Promise<void> {
-  setPriority(NICENESS);
-  const { analysisThreadCount: threadCount, leaseSeconds } = settings();
-  const workerId = randomUUID();
-  const bell = new Bell();
-  const stop = new AbortController();
-  const giveUp = new AbortController();
-  const stopping = stop.signal;
-  const stopListening = listenForRings(() => bell.ring());
-  const slot = { bell, threadEntry: THREAD_ENTRY, leaseSeconds, stopping, giveUp: giveUp.signal };
-  const slots = Array.from({ length: threadCount }, () => claimLoop(slot));
-  const duties = [
+/** What a worker does beside analysing; the parts for all workers are done by one of them at a time. */
+function startDuties({ workerId, threadCount, stopping }: DutiesOptions): Promise<void>[] {
+  return [
     repeat({
       name: 'heartbeat',
       everySeconds: HEARTBEAT_SECONDS,
@@ -70,17 +63,41 @@ async function main(): Promise<void> {
       task: () => withDatabaseLock('sweep', sweepStorage),
     }),
   ];
+}
+
+function askedToStop(): Promise<unknown> {
+  return Promise.race([once(process, 'SIGTERM'), once(process, 'SIGINT')]);
+}
+
+async function main(): Promise<void> {
+  setPriority(NICENESS);
+  const { analysisThreadCount: threadCount, leaseSeconds } = settings();
+  const workerId = randomUUID();
+  const bell = new Bell();
+  const stop = new AbortController();
+  const giveUp = new AbortController();
+  const stopListening = listenForRings(() => {
+    bell.ring();
+  });
+  const slot = { bell, threadEntry: THREAD_ENTRY, leaseSeconds, stopping: stop.signal, giveUp: giveUp.signal };
+  const slots = Array.from({ length: threadCount }, () => claimLoop(slot));
+  const duties = startDuties({ workerId, threadCount, stopping: stop.signal });
+  const stopRequest = askedToStop();
   logger().info({ workerId, threadCount, leaseSeconds }, 'the worker has started');
 
   // A slot ends by itself only when its thread cannot start: then this throws and the process ends.
-  await Promise.race([askedToStop(), ...slots]);
+  await Promise.race([stopRequest, ...slots]);
   logger().info({ workerId }, 'the worker is stopping');
   stop.abort();
   bell.ring();
-  const graceTimer = setTimeout(() => giveUp.abort(), STOP_GRACE_SECONDS * 1000);
+  const graceTimer = setTimeout(() => {
+    giveUp.abort();
+  }, STOP_GRACE_SECONDS * 1000);
   await Promise.all([...slots, ...duties, stopListening()]);
   clearTimeout(graceTimer);
-  await sayGoodbye(workerId).catch((error: unknown) => logger().warn({ err: error }, 'no goodbye'));
+  await sayGoodbye(workerId).catch((error: unknown) => {
+    logger().warn({ err: error }, 'the heartbeat row stays behind');
+  });
   closeBell();
   await database.close();
   logger().info({ workerId }, 'the worker has stopped');

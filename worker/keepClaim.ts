@@ -16,18 +16,18 @@ interface KeptClaim {
  * end the work: the fence decides about the result.
  */
 export function keepClaim({ claim, leaseSeconds, onLost }: KeptClaim): () => void {
-  const timer = setInterval(
-    () => {
-      renewLease(claim, leaseSeconds).then(
-        (isHeld) => {
-          if (isHeld) return;
-          clearInterval(timer);
-          onLost();
-        },
-        (error: unknown) => logger().warn({ err: error, recordingId: claim.recordingId }, 'the lease was not renewed'),
-      );
-    },
-    (leaseSeconds / RENEWALS_PER_LEASE) * 1000,
-  );
-  return () => clearInterval(timer);
+  const renew = async (): Promise<void> => {
+    try {
+      if (await renewLease(claim, leaseSeconds)) return;
+    } catch (error) {
+      logger().warn({ err: error, recordingId: claim.recordingId }, 'the lease was not renewed');
+      return;
+    }
+    clearInterval(timer);
+    onLost();
+  };
+  const timer = setInterval(() => void renew(), (leaseSeconds / RENEWALS_PER_LEASE) * 1000);
+  return () => {
+    clearInterval(timer);
+  };
 }

@@ -28,5 +28,5 @@ export async function countLiveWorkers(withinSeconds: number): Promise<number> {
     'SELECT COUNT(*) AS liveCount FROM worker_heartbeats WHERE seen_at >= NOW(3) - INTERVAL :withinSeconds SECOND',
     { type: QueryTypes.SELECT, replacements: { withinSeconds } },
   );
-  return Number(row?.liveCount ?? 0);
+  return row?.liveCount ?? 0;
 }

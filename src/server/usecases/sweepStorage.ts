@@ -63,16 +63,19 @@ async function failMissing(storedIds: ReadonlySet<string>): Promise<number> {
   let afterId = BEFORE_ALL_IDS;
   for (;;) {
     const page = await listWithBlobs(afterId, PAGE_COUNT);
-    for (const recording of page) {
-      if (!storedIds.has(recording.blobId) && (await isMissing(recording.blobId))) {
-        refuseEmptyStorage(storedIds);
-        if (await failOne(recording)) missingCount += 1;
-      }
+    for (const recording of page.filter(({ blobId }) => !storedIds.has(blobId))) {
+      if (await failIfMissing(recording, storedIds)) missingCount += 1;
     }
     const last = page.at(-1);
     if (last === undefined) return missingCount;
     afterId = last.recordingId;
   }
+}
+
+async function failIfMissing(recording: RecordingWithBlob, storedIds: ReadonlySet<string>): Promise<boolean> {
+  if (!(await isMissing(recording.blobId))) return false;
+  refuseEmptyStorage(storedIds);
+  return failOne(recording);
 }
 
 /** Files come while the sweeper works, so the list alone proves nothing. */
