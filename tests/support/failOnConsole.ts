@@ -1,8 +1,8 @@
-import { afterEach, beforeEach, expect, vi } from 'vitest';
+import { afterEach, beforeEach, expect, type MockInstance, vi } from 'vitest';
 
 /** Unexpected console output fails the test that caused it: a warning nobody reads is a defect nobody mends. */
 const methods = ['error', 'warn', 'log'] as const;
-let spies: ReturnType<typeof vi.spyOn>[] = [];
+let spies: MockInstance<(...values: unknown[]) => void>[] = [];
 
 beforeEach(() => {
   spies = methods.map((method) => vi.spyOn(console, method));
