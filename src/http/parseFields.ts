@@ -16,7 +16,15 @@ const FIELD_NAME_MAXIMUM_CHARACTERS = 120;
 export function parseFields<Schema extends z.ZodMiniType>(schema: Schema, value: unknown): z.infer<Schema> {
   const parsed = schema.safeParse(value);
   if (parsed.success) return parsed.data;
-  throw invalidFields(parsed.error.issues.flatMap(fieldErrorsOf).slice(0, FIELD_ERROR_MAXIMUM_COUNT));
+  const fieldErrors = firstOfEachField(parsed.error.issues.flatMap(fieldErrorsOf));
+  throw invalidFields(fieldErrors.slice(0, FIELD_ERROR_MAXIMUM_COUNT));
+}
+
+/** Of several rules that a value breaks, the first is told; the others often follow from it. */
+function firstOfEachField(fieldErrors: readonly FieldError[]): FieldError[] {
+  return fieldErrors.filter(
+    ({ field }, index) => fieldErrors.findIndex((earlier) => earlier.field === field) === index,
+  );
 }
 
 function fieldErrorsOf(issue: z.core.$ZodIssue): FieldError[] {
