@@ -22,7 +22,7 @@ export function ConditionFields({ texts, onChange, errorOf }: Props) {
       <legend className="mb-2 font-bold">Conditions of all recordings</legend>
       <TextField label="Supply" unit="V" inputMode="decimal" {...box('supplyVolts')} />
       <TextField label="Load" placeholder="no load, 80 mm fan, …" {...box('load')} />
-      <TextField label="Air" unit="°C" inputMode="decimal" {...box('ambientCelsius')} />
+      <TextField label="Air temperature" unit="°C" inputMode="decimal" {...box('ambientCelsius')} />
       <TextField label="Note" {...box('note')} />
     </fieldset>
   );
