@@ -1,7 +1,9 @@
 import type { APIContext } from 'astro';
 import { forbidden } from '#server/errors.ts';
+import { canInBench } from '#server/policies/abilities.ts';
 import type { Actor } from '#server/policies/actor.ts';
 import { blobStorage } from '#server/storage/blobStorage.ts';
+import { benchToWriteIn } from '#server/usecases/benchChoice.ts';
 import { createRecording, type CreatedRecording, keyBytes } from '#server/usecases/createRecording.ts';
 import { placeUpload } from '#server/usecases/placeUpload.ts';
 import { receiveUpload } from './receiveUpload.ts';
@@ -29,9 +31,11 @@ export async function acceptUpload(context: APIContext, actor: Actor): Promise<C
   });
   try {
     const fields = parseUploadFields(texts);
+    const benchId = benchToWriteIn(actor, fields.benchId, 'contribute');
     const present = await reloadActor(context);
-    if (present?.account.id !== actor.account.id) throw forbidden();
-    return await createRecording({ actor: present, upload, fields, idempotencyKey });
+    // The role may have gone, or the sign-in ended, while the file came in.
+    if (present === null || !canInBench(present, benchId, 'contribute')) throw forbidden();
+    return await createRecording({ actor: present, upload, fields: { ...fields, benchId }, idempotencyKey });
   } finally {
     await upload.temporary.discard();
   }
