@@ -44,7 +44,7 @@ export const ACCEPTED_FILE_EXTENSIONS = [
 ] as const;
 
 /** Media types for a file chooser. Phones offer their recorder and gallery for these; the content decides, not the name. */
-export const ACCEPTED_MEDIA_TYPES = ['audio/*', 'video/*'] as const;
+const ACCEPTED_MEDIA_TYPES = ['audio/*', 'video/*'] as const;
 
 /** Value for the `accept` attribute of a file chooser. */
 export const FILE_CHOOSER_ACCEPT = [...ACCEPTED_MEDIA_TYPES, ...ACCEPTED_FILE_EXTENSIONS].join(',');

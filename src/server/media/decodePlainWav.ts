@@ -82,5 +82,5 @@ function writeHeader(view: DataView, { format }: WavDescription, soundBytes: num
 }
 
 function writeText(view: DataView, offset: number, text: string): void {
-  for (const [index, character] of [...text].entries()) view.setUint8(offset + index, character.charCodeAt(0));
+  for (let index = 0; index < text.length; index++) view.setUint8(offset + index, text.charCodeAt(index));
 }

@@ -51,7 +51,9 @@ export async function decodeWithFfmpeg(
     inputPath: path,
     wallSeconds: DECODE_WALL_SECONDS,
     maximumOutputBytes: MAXIMUM_OUTPUT_BYTES,
-    onOutput: (bytes) => parser.push(bytes),
+    onOutput: (bytes) => {
+      parser.push(bytes);
+    },
     signal,
   });
   if (run.ending === 'timed-out') throw new DecoderCrashed('timed-out');

@@ -7,23 +7,20 @@ import {
 } from '#lib/schemas/uploadLimits.ts';
 
 /** Why a file is refused before it is acknowledged. Permanent: clients and scripts compare them. */
-export const MEDIA_REFUSAL_CODES = [
-  'empty-file',
-  'not-audio',
-  'no-audio',
-  'bad-header',
-  'unsupported-rate',
-  'too-many-channels',
-  'too-short',
-  'too-long',
-  'cannot-decode',
-  'probe-timed-out',
-] as const;
-export type MediaRefusalCode = (typeof MEDIA_REFUSAL_CODES)[number];
+export type MediaRefusalCode =
+  | 'empty-file'
+  | 'not-audio'
+  | 'no-audio'
+  | 'bad-header'
+  | 'unsupported-rate'
+  | 'too-many-channels'
+  | 'too-short'
+  | 'too-long'
+  | 'cannot-decode'
+  | 'probe-timed-out';
 
 /** Why an acknowledged recording failed: what only decoding shows. Permanent like the refusals. */
-export const MEDIA_FAILURE_CODES = ['cannot-decode', 'truncated', 'too-short', 'too-long', 'unsupported-rate'] as const;
-export type MediaFailureCode = (typeof MEDIA_FAILURE_CODES)[number];
+export type MediaFailureCode = 'cannot-decode' | 'truncated' | 'too-short' | 'too-long' | 'unsupported-rate';
 
 /**
  * A file that is not accepted. The message is for people: what happened, why, what to do; it never

@@ -56,24 +56,28 @@ export async function runSandboxed(options: SandboxedProgram): Promise<Sandboxed
   const child = spawn('prlimit', commandLine, {
     stdio: ['ignore', 'pipe', 'pipe'],
     detached: true,
-    env: { PATH: process.env['PATH'] },
+    env: { PATH: process.env.PATH },
   });
-  let stopReason: 'timed-out' | 'output-capped' | null = null;
-  const stop = (reason: typeof stopReason): void => {
-    stopReason ??= reason;
+  const stopped: { reason?: 'timed-out' | 'output-capped' } = {};
+  const stop = (reason: 'timed-out' | 'output-capped'): void => {
+    stopped.reason ??= reason;
     killGroup(child);
   };
   const timer = setTimeout(stop, options.wallSeconds * 1000, 'timed-out');
-  const abort = (): void => killGroup(child);
+  const abort = (): void => {
+    killGroup(child);
+  };
   options.signal?.addEventListener('abort', abort);
   try {
     const [end, errorText] = await Promise.all([
       endOf(child),
       readErrorText(child.stderr),
-      forwardOutput(child.stdout, options, () => stop('output-capped')),
+      forwardOutput(child.stdout, options, () => {
+        stop('output-capped');
+      }),
     ]);
     options.signal?.throwIfAborted();
-    const ending = stopReason ?? (end.isBySignal ? 'killed' : 'exited');
+    const ending = stopped.reason ?? (end.isBySignal ? 'killed' : 'exited');
     return { ending, exitStatus: end.exitStatus, errorLines: errorText.split('\n').filter((line) => line !== '') };
   } finally {
     clearTimeout(timer);

@@ -4,9 +4,8 @@ import { CANNOT_DECODE_MESSAGE, DecoderCrashed, MediaUnreadable } from './mediaE
 import type { MediaProbe } from './mediaProbe.ts';
 import { runSandboxed, type SandboxedRun } from './runSandboxed.ts';
 
-/** Media type and extension of what `transcodeForPlayback` writes. */
+/** Media type of what `transcodeForPlayback` writes. */
 export const PLAYBACK_MEDIA_TYPE = 'audio/mpeg';
-export const PLAYBACK_FILE_EXTENSION = '.mp3';
 
 const TRANSCODE_WALL_SECONDS = 60;
 /** Ten minutes at the bit rate are under 10 MB. */

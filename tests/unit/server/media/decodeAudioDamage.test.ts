@@ -48,7 +48,7 @@ describe('decodeAudio on damaged files', () => {
     await expect(decode(path)).rejects.toMatchObject({
       name: 'MediaUnreadable',
       code: 'truncated',
-      message: expect.stringContaining('recording was not finished'),
+      message: expect.stringContaining('recording was not finished') as string,
     });
   });
 
@@ -81,7 +81,7 @@ describe('decodeAudio on damaged files', () => {
     await expect(decode(path)).rejects.toMatchObject({
       name: 'MediaUnreadable',
       code: 'too-long',
-      message: expect.stringContaining('limit 10 min'),
+      message: expect.stringContaining('limit 10 min') as string,
     });
   });
 

@@ -26,7 +26,7 @@ describe('probeMedia', () => {
     await expect(probeMedia(path)).rejects.toMatchObject({
       name: 'MediaRefused',
       code: 'empty-file',
-      message: expect.stringContaining('The file is empty (0 bytes).'),
+      message: expect.stringContaining('The file is empty (0 bytes).') as string,
     });
   });
 
@@ -37,7 +37,7 @@ describe('probeMedia', () => {
     const path = await folder.write('short.wav', wavBytes({ data }));
     await expect(probeMedia(path)).rejects.toMatchObject({
       code: 'too-short',
-      message: expect.stringContaining('0.0 s; at least 0.5 s needed'),
+      message: expect.stringContaining('0.0 s; at least 0.5 s needed') as string,
     });
   });
 
@@ -50,7 +50,7 @@ describe('probeMedia', () => {
     const bytes = (seconds: number) => wavBytes({ sampleRateHz: 8000, data: Buffer.alloc(seconds * 16_000) });
     await expect(probeMedia(await folder.write('long.wav', bytes(601)))).rejects.toMatchObject({
       code: 'too-long',
-      message: expect.stringContaining('10 min 1 s; limit 10 min'),
+      message: expect.stringContaining('10 min 1 s; limit 10 min') as string,
     });
     const probe = await probeMedia(await folder.write('limit.wav', bytes(600)));
     expect(probe.declaredDurationSeconds).toBe(600);
@@ -116,7 +116,7 @@ describe('probeMedia', () => {
       const startSeconds = performance.now() / 1000;
       await expect(probeMedia(path)).rejects.toMatchObject({
         code: 'too-long',
-        message: expect.stringContaining('4 h 0 min; limit 10 min'),
+        message: expect.stringContaining('4 h 0 min; limit 10 min') as string,
       });
       expect(performance.now() / 1000 - startSeconds).toBeLessThan(2);
     }
@@ -132,7 +132,7 @@ describe('probeMedia', () => {
     const path = await folder.ffmpeg('mute.mp4', ...pictureInput(1));
     await expect(probeMedia(path)).rejects.toMatchObject({
       code: 'no-audio',
-      message: expect.stringContaining('no sound track'),
+      message: expect.stringContaining('no sound track') as string,
     });
   });
 
@@ -173,7 +173,7 @@ describe('probeMedia', () => {
     const path = await folder.ffmpeg('speech.mka', ...toneInput(1), '-c:a', 'ac3');
     await expect(probeMedia(path)).rejects.toMatchObject({
       code: 'cannot-decode',
-      message: expect.stringContaining('ac3'),
+      message: expect.stringContaining('ac3') as string,
     });
   });
 

@@ -140,7 +140,9 @@ describe.each(MODES)('runSandboxed by %s', (mode) => {
     const flood = FLOOD.map((argument) => (argument === 'anullsrc' ? source : argument));
     await expect(run(flood, { mode, onOutput })).rejects.toThrow('disk full');
     // The kill is sent before the rejection; the system takes a moment to carry it out.
-    await vi.waitFor(async () => expect(await descendantsOf(source)).toEqual([]));
+    await vi.waitFor(async () => {
+      expect(await descendantsOf(source)).toEqual([]);
+    });
   });
 
   it('limits memory, processor time, open files, written files and core dumps of the tool', async () => {
