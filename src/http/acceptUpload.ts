@@ -1,5 +1,6 @@
 import type { APIContext } from 'astro';
 import { forbidden } from '#server/errors.ts';
+import { countUpload } from '#server/metrics.ts';
 import { canInBench } from '#server/policies/abilities.ts';
 import type { Actor } from '#server/policies/actor.ts';
 import { blobStorage } from '#server/storage/blobStorage.ts';
@@ -16,6 +17,17 @@ import { type FormTexts, parseUploadFields } from './upload/parseUploadFields.ts
  * @throws ServerError of receiveUpload and createRecording
  */
 export async function acceptUpload(context: APIContext, actor: Actor): Promise<CreatedRecording> {
+  try {
+    const accepted = await takeUpload(context, actor);
+    countUpload(accepted.created ? 'created' : 'repeated');
+    return accepted;
+  } catch (error) {
+    countUpload('refused');
+    throw error;
+  }
+}
+
+async function takeUpload(context: APIContext, actor: Actor): Promise<CreatedRecording> {
   const { request } = context;
   const idempotencyKey = request.headers.get('idempotency-key');
   const byteCount = Number(request.headers.get('content-length') ?? 0);
