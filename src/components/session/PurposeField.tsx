@@ -14,12 +14,12 @@ export function PurposeField({ chosen, onChoose }: Props) {
       {SESSION_PURPOSES.map((purpose) => (
         <label
           key={purpose}
-          className="flex items-baseline gap-3 border-l-[3px] border-transparent py-2 pl-3 touch has-checked:border-ink"
+          className="flex items-start gap-3 border-l-[3px] border-transparent py-2 pl-3 touch has-checked:border-ink"
         >
           <input
             type="radio"
             name="purpose"
-            className="size-4 shrink-0 self-center accent-ink"
+            className="mt-1 size-4 shrink-0 accent-ink"
             value={purpose}
             checked={purpose === chosen}
             onChange={() => {

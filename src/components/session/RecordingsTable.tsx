@@ -17,7 +17,7 @@ interface Props {
 
 /** A table on the desk; on the phone each row becomes a block of lines, so that nothing scrolls sideways. */
 const ROW =
-  'grid grid-cols-[2.5rem_minmax(0,1fr)_auto] items-center gap-x-4 border-b border-line py-2 desk:grid-cols-[2.5rem_minmax(0,3fr)_7rem_minmax(0,5fr)_minmax(0,4fr)]';
+  'grid grid-cols-[2.5rem_minmax(0,1fr)_auto] items-center gap-x-4 border-b border-line py-2 desk:grid-cols-[2.5rem_minmax(0,3fr)_7rem_minmax(0,4fr)_minmax(0,4fr)]';
 
 /** The recordings of a session. Its dot-and-interval column stands on the chart's axis. */
 export function RecordingsTable({ rows, axis, newestId }: Props) {

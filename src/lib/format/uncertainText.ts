@@ -1,6 +1,8 @@
 import { numberText } from './numberText.ts';
 
-/** More decimals than this help nobody, however narrow an interval is. */
+/** However narrow an interval is: a phone's sample clock is not known better than some parts in 100 000. */
+const SIGNIFICANT_DIGITS_MAXIMUM = 5;
+/** For values next to zero, whose significant digits lie far behind the mark. */
 const DECIMALS_MAXIMUM = 4;
 
 /** A value with its 95 % interval, all in one unit; `low` ≤ `value` ≤ `high`. */
@@ -11,16 +13,20 @@ export interface Uncertain {
 }
 
 /**
- * Decimals that an uncertain value deserves: the first digit of half the interval is the last that is shown.
+ * Decimals that an uncertain value deserves: the first digit of half the interval is the last that is shown, and
+ * the value shows at most five significant digits.
  *
  * @returns integer in [0, 4]; 0 when the interval is empty or not finite
  * @example uncertainDecimals({ value: 2874, low: 2868.1, high: 2880.3 }) // 0
  * @example uncertainDecimals({ value: 4.31, low: 4.29, high: 4.33 }) // 2
  */
-export function uncertainDecimals({ low, high }: Uncertain): number {
+export function uncertainDecimals({ value, low, high }: Uncertain): number {
   const halfWidth = (high - low) / 2;
   if (!(halfWidth > 0) || !Number.isFinite(halfWidth)) return 0;
-  return Math.min(DECIMALS_MAXIMUM, Math.max(0, -Math.floor(Math.log10(halfWidth))));
+  const meaningful = -Math.floor(Math.log10(halfWidth));
+  const readable =
+    value === 0 ? DECIMALS_MAXIMUM : SIGNIFICANT_DIGITS_MAXIMUM - 1 - Math.floor(Math.log10(Math.abs(value)));
+  return Math.max(0, Math.min(DECIMALS_MAXIMUM, meaningful, readable));
 }
 
 /** The texts of one uncertain value, all with the same decimals. */

@@ -15,7 +15,7 @@ interface Props {
 /** One file on its way, until its speed is known. */
 export function UploadRow({ upload, queue }: Props) {
   return (
-    <li className="grid gap-x-6 border-t border-line py-3 desk:grid-cols-[minmax(0,1fr)_minmax(0,2fr)_auto] desk:items-center">
+    <li className="grid gap-x-6 border-t border-line py-3 desk:grid-cols-[minmax(0,1fr)_minmax(0,2fr)_16rem] desk:items-center">
       <span className="truncate" title={upload.file.name}>
         {upload.file.name}
       </span>
