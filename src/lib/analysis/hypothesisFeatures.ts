@@ -22,8 +22,10 @@ export interface DomainFeatures extends PeakMatch {
   readonly eventAlternation: number;
   /** The same among the shaft orders between events: only even ones sounding means that the shaft turns twice as fast, [0, 6]. */
   readonly shaftAlternation: number;
-  /** How far event orders stand above the shaft orders between them: events taken for mere unevenness do not, [−6, 6]. */
-  readonly eventContrast: number;
+  /** Mean level of the shaft orders between events over that of the events: near 1 they are events themselves, [0, 2]. */
+  readonly betweenRatio: number;
+  /** 1 where the orders between are as strong as the events, 0 below four fifths of them: no contact is that uneven, [0, 1]. */
+  readonly betweenEvenness: number;
   /** Lines between the events that no division of the turn explains: evidence that the rate is too high, [0, 6]. */
   readonly strayLevel: number;
   /** Lines half way (or at thirds) between shaft orders, with more than one event a turn: the same evidence, [0, 6]. */
@@ -37,6 +39,8 @@ const WEIGHT_RESERVE = 0.5;
 const HIT_NEPERS = 0.8;
 const HIT_ORDERS = 4;
 const LARGEST_DIFFERENCE = 6;
+const LARGEST_RATIO = 2;
+const EVEN_RATIO = 0.8;
 const PRIMES = [2, 3, 5, 7] as const;
 const SHAFT_PRIMES = [2, 3] as const;
 const MOST_SHAFT_ORDERS = 28;
@@ -52,7 +56,8 @@ const NO_EVIDENCE: DomainFeatures = {
   hitFraction: 0,
   eventAlternation: 0,
   shaftAlternation: 0,
-  eventContrast: 0,
+  betweenRatio: 0,
+  betweenEvenness: 0,
   strayLevel: 0,
   strayShaftLevel: 0,
   unexplainedShare: 0,
@@ -77,19 +82,22 @@ export function domainFeatures(
     .map((order) => lineLevel(spectrum, (order * ratio) / eventsPerTurn))
     .filter(Number.isFinite);
   if (!events.some(Number.isFinite) && expected.length === 0) return NO_EVIDENCE;
-  const shaftOrders = hasShaftOrders ? shaftOrderLevels(spectrum, shaft, eventsPerTurn) : [];
-  const between = shaftOrders.filter(({ isEvent }) => !isEvent);
+  const between = hasShaftOrders ? ordersBetween(spectrum, shaft, eventsPerTurn) : [];
+  const low = between.filter(({ order }) => order < 2 * eventsPerTurn);
+  const eventLevel = weightedLevel(events, expected);
+  const ratioBetween = betweenRatio(meanLevel(low.map(({ level }) => level)), eventLevel);
   const shaftComb = { spacing: shaft, divisors: SHAFT_PRIMES, firstTooth: 0, toothCount: STRAY_SHAFT_ORDERS };
   const numbered = events.map((level, index) => ({ order: index + first, level }));
   return {
-    eventLevel: weightedLevel(events, expected),
+    eventLevel,
     hitFraction: soundingFraction(events.slice(0, HIT_ORDERS)),
     eventAlternation: alternation(numbered),
     shaftAlternation: alternation(between),
-    eventContrast: eventContrast(shaftOrders),
+    betweenRatio: ratioBetween,
+    betweenEvenness: Math.max(0, Math.min(1, (ratioBetween - EVEN_RATIO) / (1 - EVEN_RATIO))),
     strayLevel: strayLevel(spectrum, hypothesis, first),
     strayShaftLevel: hasShaftOrders ? levelBetween(spectrum, shaftComb) : 0,
-    shaftShare: soundingFraction(between.filter(({ order }) => order < 2 * eventsPerTurn).map(({ level }) => level)),
+    shaftShare: soundingFraction(low.map(({ level }) => level)),
     ...matchPeaks(spectrum, peaks, { ratio, shaft, first }),
   };
 }
@@ -99,27 +107,16 @@ interface NumberedLevel {
   readonly level: number;
 }
 
-/** Levels of the lowest shaft orders that can be heard. */
-function shaftOrderLevels(
-  spectrum: OrderLevels,
-  shaft: number,
-  eventsPerTurn: number,
-): (NumberedLevel & { isEvent: boolean })[] {
+/** Levels of the lowest shaft orders that can be heard and are no events. */
+function ordersBetween(spectrum: OrderLevels, shaft: number, eventsPerTurn: number): NumberedLevel[] {
   return Array.from({ length: MOST_SHAFT_ORDERS }, (_, index) => index + 1)
-    .map((order) => ({
-      order,
-      level: lineLevel(spectrum, order * shaft),
-      isEvent: Number.isInteger(order / eventsPerTurn),
-    }))
+    .filter((order) => !Number.isInteger(order / eventsPerTurn))
+    .map((order) => ({ order, level: lineLevel(spectrum, order * shaft) }))
     .filter(({ level }) => Number.isFinite(level));
 }
 
-/** Mean level of event orders less that of the orders between them; 0 when one of the two cannot be heard. */
-function eventContrast(orders: readonly (NumberedLevel & { isEvent: boolean })[]): number {
-  const events = orders.filter(({ isEvent }) => isEvent).map(({ level }) => level);
-  const others = orders.filter(({ isEvent }) => !isEvent).map(({ level }) => level);
-  if (events.length === 0 || others.length === 0) return 0;
-  return Math.max(-LARGEST_DIFFERENCE, Math.min(LARGEST_DIFFERENCE, meanLevel(events) - meanLevel(others)));
+function betweenRatio(betweenLevel: number, eventLevel: number): number {
+  return Math.min(LARGEST_RATIO, betweenLevel / (eventLevel + WEIGHT_RESERVE));
 }
 
 function weightedLevel(events: readonly number[], expected: readonly number[]): number {

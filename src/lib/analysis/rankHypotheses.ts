@@ -3,7 +3,13 @@ import { rpmFromEventHertz } from '#lib/units/rotation.ts';
 import { domainFeatures } from './hypothesisFeatures.ts';
 import type { DomainFeatures } from './hypothesisFeatures.ts';
 import { ratioHypotheses } from './hypotheses.ts';
-import { DOMAIN_WEIGHTS, PATH_SCORE_WEIGHT, SPEED_CURVATURE_WEIGHT, SPEED_WEIGHT } from './rankingWeights.ts';
+import {
+  DOMAIN_WEIGHTS,
+  PATH_SCORE_WEIGHT,
+  QUALITY_WEIGHTS,
+  SPEED_CURVATURE_WEIGHT,
+  SPEED_WEIGHT,
+} from './rankingWeights.ts';
 import type { AnalysisSettings } from './settings.ts';
 import { pathScoreAt } from './soundFamily.ts';
 import type { SoundFamily } from './soundFamily.ts';
@@ -81,14 +87,23 @@ function hypothesesOf(
 
 function scoreOf(hypothesis: Omit<RankedHypothesis, 'probability'>): number {
   const octaves = Math.log2(hypothesis.shaftSpeedRpm / TYPICAL_RPM);
-  let score =
-    PATH_SCORE_WEIGHT * hypothesis.pathScore + SPEED_WEIGHT * octaves + SPEED_CURVATURE_WEIGHT * octaves * octaves;
-  for (const name of Object.keys(DOMAIN_WEIGHTS.waveform) as (keyof DomainFeatures)[]) {
-    score +=
-      DOMAIN_WEIGHTS.waveform[name] * hypothesis.waveform[name] +
-      DOMAIN_WEIGHTS.envelope[name] * hypothesis.envelope[name];
-  }
-  return score;
+  return (
+    PATH_SCORE_WEIGHT * hypothesis.pathScore +
+    SPEED_WEIGHT * octaves +
+    SPEED_CURVATURE_WEIGHT * octaves * octaves +
+    weighted(DOMAIN_WEIGHTS.waveform, hypothesis.waveform) +
+    weighted(DOMAIN_WEIGHTS.envelope, hypothesis.envelope) +
+    weighted(QUALITY_WEIGHTS, hypothesis.family.quality)
+  );
+}
+
+function weighted<Name extends string>(
+  weights: Readonly<Record<Name, number>>,
+  features: Readonly<Record<Name, number>>,
+): number {
+  let sum = 0;
+  for (const name of Object.keys(weights) as Name[]) sum += weights[name] * features[name];
+  return sum;
 }
 
 function merged(ranked: readonly RankedHypothesis[]): RankedHypothesis[] {

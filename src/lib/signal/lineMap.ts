@@ -3,6 +3,7 @@ import type { CellPooling } from './cellPooling.ts';
 import { fftPlan } from './fftPlan.ts';
 import type { SampledSignal } from './frontEnd.ts';
 import { cellOfHertz } from './logGrid.ts';
+import { logPower } from './logPower.ts';
 import { subtractNoiseFloor } from './noiseFloor.ts';
 import { hannWindow } from './window.ts';
 
@@ -101,11 +102,11 @@ function logSpectrumAt({ samples, sampleRateHz }: SampledSignal, size: number, c
     plan.input[sample] = (samples[start + sample] as number) * (window[sample] as number);
   }
   const spectrum = plan.transformReal();
-  const logPower = new Float32Array(size / 2 + 1);
-  for (let bin = 0; bin < logPower.length; bin++) {
+  const power = new Float64Array(size / 2 + 1);
+  for (let bin = 0; bin < power.length; bin++) {
     const real = spectrum[2 * bin] as number;
     const imaginary = spectrum[2 * bin + 1] as number;
-    logPower[bin] = Math.log(real * real + imaginary * imaginary + Number.MIN_VALUE);
+    power[bin] = real * real + imaginary * imaginary;
   }
-  return logPower;
+  return logPower(power);
 }

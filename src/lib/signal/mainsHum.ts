@@ -1,6 +1,7 @@
 import { averageSpectrum } from './averageSpectrum.ts';
 import type { SampledSignal } from './frontEnd.ts';
 import type { LineMap } from './lineMap.ts';
+import { logPower } from './logPower.ts';
 import { cellOfHertz } from './logGrid.ts';
 import { subtractNoiseFloor } from './noiseFloor.ts';
 
@@ -37,10 +38,7 @@ const LOOK_BINS = 1.5;
  */
 export function detectMainsHum(waveform: SampledSignal): MainsHum | null {
   const { power, binHz } = averageSpectrum(waveform.samples, waveform.sampleRateHz, SPECTRUM_SIZE, MOST_SEGMENTS);
-  const levels = subtractNoiseFloor(
-    Float32Array.from(power, (value) => Math.log(value + Number.MIN_VALUE)),
-    FLOOR_REACH_BINS,
-  );
+  const levels = subtractNoiseFloor(logPower(power), FLOOR_REACH_BINS);
   const reach = LOOK_BINS * Math.max(1, SPECTRUM_SIZE / waveform.samples.length);
   let best: MainsComb | null = null;
   for (const nominalHz of NOMINAL_MAINS_HZ) {

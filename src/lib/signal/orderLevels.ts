@@ -4,6 +4,7 @@ import { cyclesAt, longestActiveStretch } from './eventTrack.ts';
 import type { EventPhase } from './eventTrack.ts';
 import type { FrontEnd, SampledSignal } from './frontEnd.ts';
 import { WAVEFORM_USABLE_FRACTION } from './frontEnd.ts';
+import { logPower } from './logPower.ts';
 import { subtractNoiseFloor } from './noiseFloor.ts';
 import { resampleByPhase } from './resampleByPhase.ts';
 
@@ -95,10 +96,7 @@ function orderLevels(
       sampleCount,
     });
     const { power } = averageSpectrum(resampled, 1, options.size);
-    const own = subtractNoiseFloor(
-      Float32Array.from(power, (value) => Math.log(value + Number.MIN_VALUE)),
-      options.floorReachBins,
-    );
+    const own = subtractNoiseFloor(logPower(power), options.floorReachBins);
     for (let bin = 0; bin < levels.length; bin++) levels[bin] = Math.max(levels[bin] as number, own[bin] as number);
   }
   return {

@@ -8,6 +8,8 @@ export interface PhaseSlope {
   readonly eventHz: number;
   /** Standard error of `eventHz` from the scatter of the phase about the line, Hz. */
   readonly standardErrorHz: number;
+  /** Scatter of the phase about a straight line, standard deviation in event cycles. */
+  readonly scatterCycles: number;
   /** Scatter of the phase about a straight line over what noise alone makes, variance ratio; above 2.5 the speed really wandered. */
   readonly wanderRatio: number;
 }
@@ -69,6 +71,7 @@ function slopeOf(times: Float64Array, phases: Float64Array): PhaseSlope {
   return {
     eventHz: line.slope,
     standardErrorHz: Math.sqrt(variance / line.sumOfSquares),
+    scatterCycles: Math.sqrt(line.residualVariance),
     wanderRatio: line.residualVariance / (noise + Number.MIN_VALUE),
   };
 }

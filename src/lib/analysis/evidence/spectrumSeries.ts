@@ -1,3 +1,4 @@
+import { logPower } from '#lib/signal/logPower.ts';
 import { subtractNoiseFloor } from '#lib/signal/noiseFloor.ts';
 import { averageSpectrum } from '#lib/signal/averageSpectrum.ts';
 import type { SampledSignal } from '#lib/signal/frontEnd.ts';
@@ -37,10 +38,7 @@ function columnsOf(signals: readonly SampledSignal[], size: number, lowestHz: nu
   let binHz = 1;
   for (const signal of signals) {
     const spectrum = averageSpectrum(signal.samples, signal.sampleRateHz, size, MOST_SEGMENTS);
-    const levels = subtractNoiseFloor(
-      Float32Array.from(spectrum.power, (power) => Math.log(power + Number.MIN_VALUE)),
-      FLOOR_REACH_BINS,
-    );
+    const levels = subtractNoiseFloor(logPower(spectrum.power), FLOOR_REACH_BINS);
     for (let bin = 0; bin < levels.length; bin++)
       strongest[bin] = Math.max(strongest[bin] as number, decibelsFromLogPower(levels[bin] as number));
     binHz = spectrum.binHz;
