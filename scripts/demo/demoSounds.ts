@@ -7,9 +7,9 @@ import { encodeWav } from './encodeWav.ts';
 const SAMPLE_RATE_HZ = 44_100;
 /** How much the speed of a small motor wanders under a steady supply, root mean square. */
 const WANDER_FRACTION = 0.002;
-/** A quiet workshop, and a fridge at the other end of it. */
 const ROOM_NOISE = { colour: 'pink', levelDecibels: -46 } as const;
-const MAINS_HUM = { frequencyHz: 100, amplitude: 0.004, harmonicCount: 3 } as const;
+/** The supply on the bench, heard beside the motor. */
+const SUPPLY_HUM = { frequencyHz: 100, amplitude: 0.004, harmonicCount: 3 } as const;
 
 export const DEMO_MOTORS = {
   heron: twoContactSound(),
@@ -32,7 +32,7 @@ function samplesOf({ motor, ...sound }: DemoSound): Float32Array {
     sampleRateHz: SAMPLE_RATE_HZ,
     wanderFraction: WANDER_FRACTION,
     noise: ROOM_NOISE,
-    fixedTones: [MAINS_HUM],
+    fixedTones: [SUPPLY_HUM],
   };
   return synthesiseMotor(options).samples;
 }
@@ -46,9 +46,11 @@ export function steadyWav(seed: number, motor: MotorSound, shaftSpeedRpm: number
   return motorWav({ seed, motor, durationSeconds: 4, speed: [{ timeSeconds: 0, shaftSpeedRpm }] });
 }
 
-/** The room with the supply on and a motor that does not start. */
+/** The room, and a motor on a battery that does not start. */
 export function stalledWav(seed: number): Buffer {
-  return motorWav({ seed, motor: {}, durationSeconds: 4, speed: [{ timeSeconds: 0, shaftSpeedRpm: 0 }] });
+  const standstill = [{ timeSeconds: 0, shaftSpeedRpm: 0 }];
+  const sound = { seed, durationSeconds: 4, sampleRateHz: SAMPLE_RATE_HZ, speed: standstill, noise: ROOM_NOISE };
+  return encodeWav(synthesiseMotor(sound).samples, SAMPLE_RATE_HZ, 'int16');
 }
 
 /** A float file whose end was never filled with sound: the recorder crashed. */
