@@ -27,11 +27,11 @@ export function orderSpectrumSeries(
     const highest = Math.max(own, loudness);
     return decibelsFromLogPower(Number.isFinite(highest) ? highest : 0);
   });
-  const step = waveform.ordersPerBin / options.cyclesPerTurn;
+  const step = waveform.ordersPerBin * options.cyclesPerTurn;
   const lowest = LOWEST_ORDER_FRACTION * Math.min(1, options.eventsPerTurn);
   const highest = Math.min(
     highestOrder,
-    Math.max(waveform.highestOrder, envelope.highestOrder) / options.cyclesPerTurn,
+    Math.max(waveform.highestOrder, envelope.highestOrder) * options.cyclesPerTurn,
   );
   const rows = decimateSpectrum(levels, {
     step,
