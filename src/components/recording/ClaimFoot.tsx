@@ -28,7 +28,7 @@ function LiveFoot({ initial, otherwise }: { initial: RecordingView; otherwise: R
   const asksForWord = recording.reading !== null && recording.review === null && recording.abilities.canReview;
   if (!asksForWord) return otherwise;
   return (
-    <div className="grid grid-cols-2 gap-2 p-2">
+    <div role="region" aria-label="Your word" className="grid grid-cols-2 gap-2 p-2">
       <Button
         weight="main"
         className="min-h-14"

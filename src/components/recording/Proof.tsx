@@ -68,7 +68,10 @@ function LiveProof({ initial }: { initial: RecordingView }) {
   );
 }
 
-function bestView({ eventsPerTurn }: ReadingView, rpm: number | null): ViewName {
+/** The spectrum in which the proof is plainest. */
+function bestView({ motion, eventsPerTurn, seriesNames }: ReadingView, rpm: number | null): ViewName {
+  // While the speed changes its lines smear; counted in turns they stand still.
+  if (motion === 'varying' && seriesNames.includes('orderSpectrum')) return 'orderSpectrum';
   return rpm !== null && eventHertzFromRpm(rpm, eventsPerTurn) < LOWEST_TONE_HZ ? 'envelopeSpectrum' : 'spectrum';
 }
 

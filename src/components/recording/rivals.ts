@@ -7,6 +7,8 @@ type Relation = 'half' | 'double';
 /** Two speeds are the same candidate within this fraction. */
 const SAME_FRACTION = 0.01;
 const CLEARLY_WEAKER_SCORE = 0.8;
+/** Below this a candidate is no rival. */
+export const NEGLIGIBLE_SCORE = 0.01;
 
 /** Whether two speeds are one candidate. */
 export function isSameSpeed(rpm: number, otherRpm: number): boolean {
@@ -36,15 +38,23 @@ export function whyNotTexts({ candidates, settings }: ReadingView, chosenRpm: nu
 
 function weightText(rival: Candidate | undefined, chosen: Candidate | undefined): string {
   if (rival === undefined) return ' explains too few lines to be a candidate.';
-  if (chosen !== undefined && rival.score > chosen.score) {
-    return ` weighs more, ${numberText(rival.score, 2)} against ${numberText(chosen.score, 2)}: ${lowered(rival.reason)}`;
-  }
-  const isWeaker = chosen !== undefined && rival.score < chosen.score * CLEARLY_WEAKER_SCORE;
-  if (isWeaker)
-    return ` weighs ${numberText(rival.score, 2)} against ${numberText(chosen.score, 2)}: ${lowered(rival.reason)}`;
-  return ` stays possible with a weight of ${numberText(rival.score, 2)}: ${lowered(rival.reason)}`;
+  const why = ownReason(rival.reason);
+  if (rival.score < NEGLIGIBLE_SCORE) return ` is as good as ruled out: ${why}`;
+  if (chosen === undefined) return ` has a weight of ${scoreText(rival.score)}: ${why}`;
+  const weights = `${scoreText(rival.score)} against ${scoreText(chosen.score)}`;
+  if (rival.score > chosen.score) return ` weighs more, ${weights}: ${why}`;
+  if (rival.score < chosen.score * CLEARLY_WEAKER_SCORE) return ` weighs ${weights}: ${why}`;
+  return ` stays possible, ${weights}: ${why}`;
 }
 
-function lowered(sentence: string): string {
-  return sentence.charAt(0).toLowerCase() + sentence.slice(1);
+/** A score as people read it: never 0.00 and never 1.00, for nothing is certain. */
+export function scoreText(score: number): string {
+  if (score < NEGLIGIBLE_SCORE) return 'under 0.01';
+  return score > 1 - NEGLIGIBLE_SCORE ? 'over 0.99' : numberText(score, 2);
+}
+
+/** The reason without the words that say how the candidate stands to the best one: the sentence around it says that. */
+function ownReason(reason: string): string {
+  const own = reason.replace(/^[^:]*best speed: /u, '');
+  return own.charAt(0).toLowerCase() + own.slice(1);
 }

@@ -31,7 +31,7 @@ describe('whyNotTexts', () => {
       { rpm: 2874, score: 0.5, reason: 'A.' },
       { rpm: 1437, score: 0.48, reason: 'B.' },
     ];
-    expect(whyNotTexts(readingView({ candidates }), 2874)[0]).toContain('stays possible with a weight of 0.48');
+    expect(whyNotTexts(readingView({ candidates }), 2874)[0]).toContain('stays possible, 0.48 against 0.50');
   });
 
   it('says that double weighs more when someone looks at the weaker half', () => {
@@ -40,6 +40,16 @@ describe('whyNotTexts', () => {
       { rpm: 1437, score: 0.4, reason: 'B.' },
     ];
     expect(whyNotTexts(readingView({ candidates }), 1437)[1]).toContain('weighs more, 0.91 against 0.40');
+  });
+
+  it('calls a half with a score of 3e-7 as good as ruled out, in its own reason', () => {
+    const candidates = [
+      { rpm: 2874, score: 0.99, reason: 'A.' },
+      { rpm: 1437, score: 3e-7, reason: 'Half the best speed: only some of its events would sound.' },
+    ];
+    expect(whyNotTexts(readingView({ candidates }), 2874)[0]).toBe(
+      'Half (1437 rpm) is as good as ruled out: only some of its events would sound.',
+    );
   });
 
   it('says when half lies outside the allowed range', () => {
