@@ -32,7 +32,7 @@ export function apiClient(credentials: { token?: string; cookie?: string } = {})
     if (credentials.cookie !== undefined) headers.set('cookie', credentials.cookie);
     const response = await fetch(baseUrl() + path, { redirect: 'manual', ...init, headers });
     const text = await response.text();
-    const isJson = /^application\/(?:problem\+)?json/.test(response.headers.get('content-type') ?? '');
+    const isJson = text !== '' && /^application\/(?:problem\+)?json/.test(response.headers.get('content-type') ?? '');
     return { status: response.status, headers: response.headers, text, body: isJson ? JSON.parse(text) : null };
   }
 

@@ -62,7 +62,11 @@ function jsonSchemas(schemas: Readonly<Record<string, z.ZodMiniType>>, io: 'inpu
   const registry = z.registry<{ id: string }>();
   for (const [id, schema] of Object.entries(schemas)) registry.add(schema, { id });
   const uri = (id: string) => `#/components/schemas/${id}`;
-  const { schemas: byName } = z.toJSONSchema(registry, { io, uri, unrepresentable: 'any' });
+  // A view grows by fields: a client that refuses unknown ones would break with the first.
+  const override = ({ jsonSchema: schema }: { jsonSchema: z.core.JSONSchema.BaseSchema }) => {
+    if (io === 'output') delete schema.additionalProperties;
+  };
+  const { schemas: byName } = z.toJSONSchema(registry, { io, uri, override, unrepresentable: 'any' });
   return Object.fromEntries(Object.entries(byName).map(([name, schema]) => [name, withoutDialect(schema)]));
 }
 

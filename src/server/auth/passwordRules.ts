@@ -51,6 +51,7 @@ const KEYBOARD_RUNS: readonly string[] = [
 const OWN_PART_MINIMUM_CHARACTERS = 6;
 const DISTINCT_MINIMUM_COUNT = 5;
 const RUN_MINIMUM_CHARACTERS = 4;
+const WORD_MINIMUM_CHARACTERS = 4;
 
 /** @throws ServerError invalid-fields (password) with the rule that the password breaks. */
 export function refuseWeakPassword(password: string, account: { readonly email: string; readonly name: string }): void {
@@ -68,21 +69,19 @@ function weaknessOf(password: string, account: { email: string; name: string }):
   const letters = password.toLowerCase();
   if (new Set(letters).size < DISTINCT_MINIMUM_COUNT) return 'Repeats too few characters. Choose something longer.';
   const ownWords = [...account.email.toLowerCase().split(/[@.]/), ...account.name.toLowerCase().split(/\s+/)];
-  if (isMostlyKnown(letters, ownWords))
-    return 'Is mostly your name or address. Choose something that is not about you.';
-  if (isMostlyKnown(letters, COMMON_STEMS)) return 'Is one of the most common passwords. Choose something of your own.';
+  if (isMostlyOf(letters, ownWords)) return 'Is mostly your name or address. Choose something that is not about you.';
+  if (isMostlyOf(letters, COMMON_STEMS) || withoutPlainRuns(letters).length < OWN_PART_MINIMUM_CHARACTERS) {
+    return 'Is one of the most common passwords. Choose something of your own.';
+  }
   return null;
 }
 
-function isMostlyKnown(letters: string, words: readonly string[]): boolean {
-  const longWords = words.filter((word) => word.length >= RUN_MINIMUM_CHARACTERS);
-  const rest = longWords.reduce((left, word) => left.replaceAll(word, ''), withoutPlainRuns(letters));
-  return rest.replaceAll(/[\d\W_]/g, '').length < OWN_PART_MINIMUM_CHARACTERS && isShortened(letters, longWords);
-}
-
-/** Digits and signs alone are fine when no known word is hidden among them. */
-function isShortened(letters: string, words: readonly string[]): boolean {
-  return words.some((word) => letters.includes(word)) || withoutPlainRuns(letters).length < OWN_PART_MINIMUM_CHARACTERS;
+/** Whether little is left once these words, plain runs, and ASCII digits and signs are taken away. */
+function isMostlyOf(letters: string, words: readonly string[]): boolean {
+  const found = words.filter((word) => word.length >= WORD_MINIMUM_CHARACTERS && letters.includes(word));
+  if (found.length === 0) return false;
+  const rest = found.reduce((left, word) => left.replaceAll(word, ''), letters);
+  return withoutPlainRuns(rest).replaceAll(/[ -@[-`{-~]/g, '').length < OWN_PART_MINIMUM_CHARACTERS;
 }
 
 /** The password without 1234, abcd, qwer and the like, forwards and backwards. */
