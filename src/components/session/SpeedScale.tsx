@@ -2,7 +2,7 @@ import { GroupedText } from '#components/ui/GroupedText.tsx';
 import { axisPercent, type SpeedAxis } from './speedAxis.ts';
 
 /** Labels closer than this, per cent of the axis, would run into each other on a phone. */
-const LABEL_SPACE_PERCENT = 16;
+const LABEL_SPACE_PERCENT = 18;
 const EDGE_PERCENT = 6;
 const PER_CENT = 100;
 

@@ -43,10 +43,16 @@ export interface UncertainText {
  */
 export function uncertainText(uncertain: Uncertain): UncertainText {
   const decimals = uncertainDecimals(uncertain);
+  const value = numberText(uncertain.value, decimals);
+  const low = numberText(uncertain.low, decimals);
+  const high = numberText(uncertain.high, decimals);
+  if (low !== high || uncertain.low === uncertain.high) return { value, low, high };
+  // Finer than the decimals: rounded outwards, for no interval may look empty that is not.
+  const scale = 10 ** decimals;
   return {
-    value: numberText(uncertain.value, decimals),
-    low: numberText(uncertain.low, decimals),
-    high: numberText(uncertain.high, decimals),
+    value,
+    low: numberText(Math.floor(uncertain.low * scale) / scale, decimals),
+    high: numberText(Math.ceil(uncertain.high * scale) / scale, decimals),
   };
 }
 

@@ -1,3 +1,4 @@
+import type { ReactNode } from 'react';
 import { NOTE_MAXIMUM_CHARACTERS } from '#lib/schemas/fields.ts';
 import { ChoiceBlank, TypedBlank } from './Blank.tsx';
 import type { ConditionErrors, UploadConditions } from './uploadConditions.ts';
@@ -17,7 +18,7 @@ interface Props {
 }
 
 const NUMBER_CHARACTERS = 6;
-const NOTE_CHARACTERS = 24;
+const NOTE_CHARACTERS = 20;
 
 /** The conditions of the files that come next, as a sentence with blanks. Every blank may stay empty. */
 export function ConditionsSentence({ conditions, onChange, errors, builds, sessions }: Props) {
@@ -28,46 +29,45 @@ export function ConditionsSentence({ conditions, onChange, errors, builds, sessi
       onChange({ [name]: value });
     },
   });
+  const number = { widthCharacters: NUMBER_CHARACTERS, isNumber: true };
   return (
-    <fieldset className="flex flex-wrap items-center gap-x-2 gap-y-3">
+    <fieldset className="flex flex-wrap items-center gap-x-3 gap-y-3">
       <legend className="sr-only">Conditions of the recordings that come next</legend>
-      <span>The motor is</span>
-      <ChoiceBlank label="Build" noneName="not a build here" choices={builds} {...blank('buildId')} />
+      <Phrase>
+        The motor is <ChoiceBlank label="Build" noneName="not a build here" choices={builds} {...blank('buildId')} />
+      </Phrase>
       {conditions.buildId === '' && (
-        <>
-          <span>with</span>
-          <TypedBlank
-            label="Sound events per turn"
-            widthCharacters={NUMBER_CHARACTERS}
-            isNumber
-            {...blank('eventsPerTurn')}
-          />
-          <span>sound events a turn (empty: one)</span>
-        </>
+        <Phrase>
+          with <TypedBlank label="Sound events per turn" {...number} {...blank('eventsPerTurn')} /> sound events a turn
+          (empty: one)
+        </Phrase>
       )}
-      <span>at</span>
-      <TypedBlank
-        label="Supply voltage in volts"
-        widthCharacters={NUMBER_CHARACTERS}
-        isNumber
-        {...blank('supplyVolts')}
-      />
-      <span>V, drawing</span>
-      <TypedBlank label="Current in amperes" widthCharacters={NUMBER_CHARACTERS} isNumber {...blank('currentAmps')} />
-      <span>A.</span>
+      <Phrase>
+        at <TypedBlank label="Supply voltage in volts" {...number} {...blank('supplyVolts')} /> V,
+      </Phrase>
+      <Phrase>
+        drawing <TypedBlank label="Current in amperes" {...number} {...blank('currentAmps')} /> A.
+      </Phrase>
       {sessions !== null && (
-        <>
-          <span>It belongs to</span>
+        <Phrase>
+          It belongs to
           <ChoiceBlank label="Session" noneName="no session" choices={sessions} {...blank('sessionId')} />
-        </>
+        </Phrase>
       )}
-      <span>Note:</span>
-      <TypedBlank
-        label="Note"
-        widthCharacters={NOTE_CHARACTERS}
-        maximumCharacters={NOTE_MAXIMUM_CHARACTERS}
-        {...blank('note')}
-      />
+      <Phrase>
+        Note:
+        <TypedBlank
+          label="Note"
+          widthCharacters={NOTE_CHARACTERS}
+          maximumCharacters={NOTE_MAXIMUM_CHARACTERS}
+          {...blank('note')}
+        />
+      </Phrase>
     </fieldset>
   );
+}
+
+/** Words that stay with their blank when the line breaks. */
+function Phrase({ children }: { children: ReactNode }) {
+  return <span className="inline-flex max-w-full items-center gap-2 max-desk:flex-wrap">{children}</span>;
 }

@@ -29,6 +29,16 @@ describe('uncertainText', () => {
   });
 });
 
+describe('uncertainText of an interval finer than five digits', () => {
+  it('rounds outwards instead of showing it empty', () => {
+    expect(uncertainText({ value: 319.9999, low: 319.9998, high: 319.99996 })).toEqual({
+      value: '320.00',
+      low: '319.99',
+      high: '320.00',
+    });
+  });
+});
+
 describe('uncertainSentence', () => {
   it('is one sentence with value, bounds and coverage', () => {
     expect(uncertainSentence({ value: 2874, low: 2868.1, high: 2880.3 }, 'rpm')).toBe(
