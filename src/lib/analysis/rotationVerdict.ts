@@ -1,6 +1,5 @@
 import { isMainsMultiple } from '#lib/signal/mainsHum.ts';
 import type { MainsHum } from '#lib/signal/mainsHum.ts';
-import { FRAME_SECONDS } from '#lib/signal/lineMap.ts';
 import { phaseSlope } from '#lib/signal/phaseSlope.ts';
 import type { ShaftSearch } from './findShaft.ts';
 import type { RankedHypothesis } from './rankHypotheses.ts';
@@ -34,12 +33,6 @@ const HUM_TOLERANCE = 4e-4;
 const HUM_SCATTER_CYCLES = 0.005;
 /** Change of slope, per cent a frame, above which no shaft with inertia makes the track. */
 const LARGEST_RESTLESSNESS = 0.6;
-/** Steps of a tune: at least this far (7 %), within three frames, from one level stretch to another … */
-const NOTE_STEP_CELLS = 12;
-const NOTE_STEP_FRAMES = 3;
-/** … and at least this often; a motor may be switched to another speed once or twice. */
-const FEWEST_NOTE_STEPS = 3;
-const NOTE_STEPS_PER_SECOND = 0.4;
 /** A voice moves from frame to frame more often than this; a tune stands still between its jumps. */
 const GLIDING_FRACTION = 0.17;
 /** Coherence of the lines of a voice, which no noise reaches. */
@@ -77,7 +70,7 @@ function refusal(
   if (quality.restlessness > LARGEST_RESTLESSNESS) {
     return quality.coherence > VOICED_COHERENCE && isGliding(path.cells) ? 'speech' : 'nothing-periodic';
   }
-  if (value < LEAST_SIGNIFICANCE || isTune(path.cells)) return 'nothing-periodic';
+  if (value < LEAST_SIGNIFICANCE) return 'nothing-periodic';
   const isHandMade = eventHz < FASTEST_HAND_HZ && quality.coherence < EVEN_RHYTHM_COHERENCE;
   return isHandMade ? 'nothing-periodic' : null;
 }
@@ -120,24 +113,4 @@ function isGliding(cells: Int32Array): boolean {
     if (before !== here) moves++;
   }
   return moves > GLIDING_FRACTION * steps;
-}
-
-/** Whether a path stands on levels between which it steps again and again. */
-function isTune(cells: Int32Array): boolean {
-  let steps = 0;
-  for (let frame = 1; frame + NOTE_STEP_FRAMES + 1 < cells.length; frame++) {
-    const last = frame + NOTE_STEP_FRAMES;
-    const [before, here, there, after] = [frame - 1, frame, last, last + 1].map((at) => cells[at] as number) as [
-      number,
-      number,
-      number,
-      number,
-    ];
-    if (Math.min(before, here, there, after) < 0) continue;
-    const isLevel = Math.abs(here - before) <= 1 && Math.abs(after - there) <= 1;
-    if (!isLevel || Math.abs(there - here) < NOTE_STEP_CELLS) continue;
-    steps++;
-    frame = last;
-  }
-  return steps >= FEWEST_NOTE_STEPS && steps > NOTE_STEPS_PER_SECOND * cells.length * FRAME_SECONDS;
 }

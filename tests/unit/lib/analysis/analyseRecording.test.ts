@@ -2,6 +2,7 @@ import { describe, expect, it } from 'vitest';
 import { analyseRecording } from '#lib/analysis/analyseRecording.ts';
 import type { Analysis } from '#lib/analysis/analyseRecording.ts';
 import { AnalysisRefused } from '#lib/analysis/analysisRefused.ts';
+import { UNSURE_BELOW_CONFIDENCE } from '#lib/analysis/reading.ts';
 import { DEFAULT_ANALYSIS_SETTINGS } from '#lib/analysis/settings.ts';
 import type { AnalysisSettings } from '#lib/analysis/settings.ts';
 import { commutatorSound, fanSound, twoContactSound } from '#lib/signal/synthesis/motorSounds.ts';
@@ -200,6 +201,19 @@ describe('analyseRecording', () => {
       (value, sample) => value + 0.05 * (cosine(50, sample) + 0.5 * cosine(150, sample) + 0.3 * cosine(250, sample)),
     );
     expect(Math.abs(speedOf(analysed(noisy, { eventsPerTurn: 6 })) / 4321 - 1)).toBeLessThan(0.01);
+  });
+
+  it('is at most unsure of a tune of half-second notes', () => {
+    const semitones = [0, 4, 7, 12, 5, 9, 2, 7, 11, 4, 0, 7];
+    let cycles = 0;
+    const tune = filled(6, (sample) => {
+      cycles += (220 * 2 ** ((semitones[Math.floor(sample / (sampleRateHz / 2))] ?? 0) / 12)) / sampleRateHz;
+      return (
+        0.1 * [1, 2, 3, 4].reduce((sum, harmonic) => sum + Math.cos(2 * Math.PI * harmonic * cycles) / harmonic, 0)
+      );
+    });
+    const { reading } = analysed(tune);
+    expect(reading.status === 'measured' ? reading.confidence : 0).toBeLessThan(UNSURE_BELOW_CONFIDENCE);
   });
 
   it('warns of clipping and still finds the speed', () => {

@@ -31,19 +31,6 @@ describe('rotationVerdict', () => {
     }
   });
 
-  it('does not take a tune of half-second notes for a shaft', () => {
-    const semitones = [0, 4, 7, 12, 5, 9, 2, 7, 11, 4, 0, 7];
-    let cycles = 0;
-    const tune = Float32Array.from({ length: 6 * sampleRateHz }, (_, sample) => {
-      const note = semitones[Math.floor(sample / (sampleRateHz / 2))] ?? 0;
-      cycles += (220 * 2 ** (note / 12)) / sampleRateHz;
-      return (
-        0.1 * [1, 2, 3, 4].reduce((sum, harmonic) => sum + Math.cos(2 * Math.PI * harmonic * cycles) / harmonic, 0)
-      );
-    });
-    expect(verdictOf(tune).reason).toBe('nothing-periodic');
-  });
-
   it('does not take footsteps, two a second with 5 % scatter, for a shaft', () => {
     const random = createRandom(6);
     const impulses = new Float64Array(10 * sampleRateHz);
