@@ -11,12 +11,12 @@ interface Props {
 /** The sound itself: from the start here, from any moment by the trend above. */
 export function Listening({ recording, listening }: Props) {
   const durationSeconds = recording.reading?.durationSeconds ?? recording.media.durationSeconds;
-  const { audio, isPlaying, atSeconds, hasFailed, hearFrom, stop } = listening;
+  const { audioProps, isPlaying, atSeconds, hasFailed, hearFrom, stop } = listening;
   return (
     <div className="flex flex-wrap items-center gap-3 py-2 print:hidden">
       {/* The sound of a motor has no words that captions could carry. */}
       {/* eslint-disable-next-line jsx-a11y/media-has-caption */}
-      <audio ref={audio} preload="none" src={`/api/v1/recordings/${recording.id}/playback`} />
+      <audio {...audioProps} preload="none" src={`/api/v1/recordings/${recording.id}/playback`} />
       {isPlaying ? (
         <Button onClick={stop}>Stop</Button>
       ) : (

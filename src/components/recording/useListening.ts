@@ -1,7 +1,8 @@
-import { useCallback, useEffect, useRef, useState, type RefObject } from 'react';
+import { useCallback, useRef, useState, type ComponentProps } from 'react';
 
 interface Listening {
-  readonly audio: RefObject<HTMLAudioElement | null>;
+  /** For the <audio> that plays it. */
+  readonly audioProps: Pick<ComponentProps<'audio'>, 'ref' | 'onPlaying' | 'onPause' | 'onEnded' | 'onTimeUpdate'>;
   readonly isPlaying: boolean;
   readonly atSeconds: number;
   readonly hasFailed: boolean;
@@ -15,29 +16,6 @@ export function useListening(): Listening {
   const [isPlaying, setIsPlaying] = useState(false);
   const [atSeconds, setAtSeconds] = useState(0);
   const [hasFailed, setHasFailed] = useState(false);
-  useEffect(() => {
-    const element = audio.current;
-    if (element === null) return undefined;
-    const stop = new AbortController();
-    const listen = (type: string, handle: () => void) => {
-      element.addEventListener(type, handle, { signal: stop.signal });
-    };
-    listen('playing', () => {
-      setIsPlaying(true);
-    });
-    listen('pause', () => {
-      setIsPlaying(false);
-    });
-    listen('ended', () => {
-      setIsPlaying(false);
-    });
-    listen('timeupdate', () => {
-      setAtSeconds(element.currentTime);
-    });
-    return () => {
-      stop.abort();
-    };
-  }, []);
   const hearFrom = useCallback((timeSeconds: number) => {
     const element = audio.current;
     if (element === null) return;
@@ -51,5 +29,25 @@ export function useListening(): Listening {
   const stop = useCallback(() => {
     audio.current?.pause();
   }, []);
-  return { audio, isPlaying, atSeconds, hasFailed, hearFrom, stop };
+  const rest = () => {
+    setIsPlaying(false);
+  };
+  return {
+    audioProps: {
+      ref: audio,
+      onPlaying: () => {
+        setIsPlaying(true);
+      },
+      onPause: rest,
+      onEnded: rest,
+      onTimeUpdate: ({ currentTarget }) => {
+        setAtSeconds(currentTarget.currentTime);
+      },
+    },
+    isPlaying,
+    atSeconds,
+    hasFailed,
+    hearFrom,
+    stop,
+  };
 }
