@@ -1,3 +1,4 @@
+import { median } from '#lib/statistics/quantiles.ts';
 import { rgbOf, type ChartColours } from './chartColours.ts';
 
 /** A spectrogram as columns. */
@@ -6,7 +7,7 @@ export interface SpectrogramColumns {
   readonly timeSeconds: readonly number[];
   /** Ascending, shape [frequencyCount]. */
   readonly frequencyHz: readonly number[];
-  /** dB above the floor, shape [timeCount, frequencyCount], row-major; null is a gap. */
+  /** dB over any reference, shape [timeCount, frequencyCount], row-major; null is a gap. */
   readonly levelDecibels: readonly (number | null)[];
 }
 
@@ -26,11 +27,12 @@ export function spectrogramPicture(columns: SpectrogramColumns, colours: ChartCo
   const context = canvas.getContext('2d');
   if (context === null) return canvas;
   const image = context.createImageData(canvas.width, canvas.height);
+  const floor = median(columns.levelDecibels.filter((level) => level !== null));
   const sheet = rgbOf(colours.sheet);
   const ink = rgbOf(colours.ink);
   for (let time = 0; time < timeCount; time += 1) {
     for (let bin = 0; bin < frequencyCount; bin += 1) {
-      const share = inkShare(columns.levelDecibels[time * frequencyCount + bin] ?? 0);
+      const share = inkShare((columns.levelDecibels[time * frequencyCount + bin] ?? floor) - floor);
       const pixel = ((frequencyCount - 1 - bin) * timeCount + time) * 4;
       for (const part of [0, 1, 2] as const) image.data[pixel + part] = sheet[part] + (ink[part] - sheet[part]) * share;
       image.data[pixel + 3] = OPAQUE;
@@ -40,7 +42,7 @@ export function spectrogramPicture(columns: SpectrogramColumns, colours: ChartCo
   return canvas;
 }
 
-/** Share of ink for a level: 0 at the floor, rising evenly. */
+/** Share of ink for a level above the floor, dB: 0 at the floor, rising evenly. */
 export function inkShare(levelDecibels: number): number {
   return Math.min(1, Math.max(0, levelDecibels / FULL_INK_DECIBELS)) * STRONGEST_INK;
 }

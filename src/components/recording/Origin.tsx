@@ -1,4 +1,7 @@
+import { useQuery } from '@tanstack/react-query';
 import type { ReactNode } from 'react';
+import { ClientProvider } from '#client/ClientProvider.tsx';
+import { readingsQuery } from '#client/queries/readings.ts';
 import { LocalTime } from '#components/session/LocalTime.tsx';
 import { GroupedText } from '#components/ui/GroupedText.tsx';
 import { byteText } from '#lib/format/byteText.ts';
@@ -6,6 +9,7 @@ import { numberText, plainNumberText } from '#lib/format/numberText.ts';
 import type { ReadingView } from '#lib/schemas/reading.ts';
 import type { RecordingView } from '#lib/schemas/recording.ts';
 import { ReadingHistory } from './ReadingHistory.tsx';
+import { useRecording } from './useRecording.ts';
 
 interface Props {
   readonly recording: RecordingView;
@@ -15,6 +19,28 @@ interface Props {
 
 /** Where the figure comes from: the file, its hash, how it was read, by which engine, and all readings so far. */
 export function Origin({ recording, readings }: Props) {
+  return (
+    <ClientProvider>
+      <LiveOrigin initial={recording} initialReadings={readings} />
+    </ClientProvider>
+  );
+}
+
+interface LiveProps {
+  readonly initial: RecordingView;
+  readonly initialReadings: readonly ReadingView[];
+}
+
+function LiveOrigin({ initial, initialReadings }: LiveProps) {
+  const recording = useRecording(initial);
+  const { data } = useQuery({
+    ...readingsQuery(initial.id),
+    initialData: { items: [...initialReadings], nextCursor: null },
+  });
+  return <OriginTable recording={recording} readings={data.items} />;
+}
+
+function OriginTable({ recording, readings }: Props) {
   const { fileName, byteCount, sha256, uploadedBy, createdAt, reading, duplicateOf } = recording;
   return (
     <section aria-labelledby="origin" className="mt-6 border-t border-line pt-4 desk:mt-10">

@@ -22,7 +22,10 @@ export function SeriesSlot({ readingId, name, heightPx, children }: Props) {
   return (
     <div style={{ minHeight: `${String(heightPx)}px` }} className="grid content-center justify-items-start gap-3">
       {error === null ? (
-        <p className="text-muted">The evidence is on its way.</p>
+        <>
+          <p className="text-muted">The evidence is on its way.</p>
+          <noscript>Charts are drawn by a script; this browser runs none.</noscript>
+        </>
       ) : (
         <>
           <Notice shape="outside" title="Not loaded">
