@@ -1,3 +1,4 @@
+import { STEPS_PER_NEPER } from './lineMap.ts';
 import type { LineMap } from './lineMap.ts';
 import type { LineMaps } from './lineMaps.ts';
 import { cellOfHertz, cellShift } from './logGrid.ts';
@@ -89,10 +90,10 @@ function addComb(target: CombScores, map: LineMap, comb: Comb): void {
   for (const [index, harmonicWeight] of HARMONIC_WEIGHTS.entries()) {
     const tooth = comb.shift + cellShift(index + 1);
     const valley = comb.shift + cellShift(index + 0.5);
-    addShifted(target, map, { shift: tooth, weight: harmonicWeight, scales });
+    addShifted(target, map, { shift: tooth, weight: harmonicWeight / STEPS_PER_NEPER, scales });
     addShifted(target, map, {
       shift: valley,
-      weight: -VALLEY_WEIGHT * harmonicWeight,
+      weight: (-VALLEY_WEIGHT * harmonicWeight) / STEPS_PER_NEPER,
       scales,
     });
   }

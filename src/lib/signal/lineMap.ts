@@ -14,8 +14,11 @@ export const FRAME_SECONDS = 0.1;
 export interface LineMap {
   readonly frameCount: number;
   readonly cellCount: number;
-  /** Strength, nepers above what noise reaches, soft-limited, ≥ 0; shape [frameCount, cellCount], row-major. */
-  readonly strengths: Float32Array;
+  /**
+   * Strength above what noise reaches, soft-limited, in steps of 1/`STEPS_PER_NEPER` of a neper: bytes, because ten
+   * minutes have twelve million cells. Shape [frameCount, cellCount], row-major.
+   */
+  readonly strengths: Uint8Array;
   /** Whether any spectrum covers a cell, shape [cellCount]: 1 or 0. */
   readonly isCovered: Uint8Array;
 }
@@ -38,12 +41,16 @@ export interface LineSource {
 /** Largest contribution of one source to a cell, so that no single line outweighs a comb. */
 const STRONGEST_NEPERS = 2.5;
 
+/** Steps of the stored strength: finer than any evidence, and three full sources fit into a byte. */
+export const STEPS_PER_NEPER = 32;
+const MOST_STEPS = 255;
+
 /** An empty map. */
 export function createLineMap(frameCount: number, cellCount: number): LineMap {
   return {
     frameCount,
     cellCount,
-    strengths: new Float32Array(frameCount * cellCount),
+    strengths: new Uint8Array(frameCount * cellCount),
     isCovered: new Uint8Array(cellCount),
   };
 }
@@ -83,7 +90,8 @@ function keepStrongest(row: Float32Array, levels: Float32Array, pooling: CellPoo
 function addRow(map: LineMap, frame: number, firstCell: number, row: Float32Array): void {
   const start = frame * map.cellCount + firstCell;
   for (let index = 0; index < row.length; index++) {
-    map.strengths[start + index] = (map.strengths[start + index] as number) + (row[index] as number);
+    const steps = Math.round(STEPS_PER_NEPER * (row[index] as number));
+    map.strengths[start + index] = Math.min(MOST_STEPS, (map.strengths[start + index] as number) + steps);
   }
 }
 
