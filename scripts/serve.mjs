@@ -62,6 +62,19 @@ function watchBody(request, response) {
   for (const event of ['end', 'close']) request.once(event, () => clearInterval(timer));
 }
 
+/**
+ * A refusal goes out while the body is still coming in. Node closes the connection with the answer when the client has
+ * asked for that; the client, still sending, would then lose the answer. So the closing waits for the end of the body.
+ */
+function closeAfterBody(request, response) {
+  if (response.shouldKeepAlive) return;
+  response.shouldKeepAlive = true;
+  response.once('finish', () => {
+    if (request.complete) request.socket.end();
+    else request.once('close', () => request.socket.end());
+  });
+}
+
 const eventStreams = new Set();
 let isStopping = false;
 
@@ -95,6 +108,7 @@ const server = createServer((request, response) => {
   }
   if (request.headers['content-length'] !== undefined || request.headers['transfer-encoding'] !== undefined) {
     watchBody(request, response);
+    closeAfterBody(request, response);
   }
   rememberEventStream(response);
   const render = () => {

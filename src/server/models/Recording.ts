@@ -29,7 +29,7 @@ import { Session } from './Session.ts';
 
 /**
  * One uploaded file with its conditions and the state of its analysis. `state`, `attempt`, `fenceToken` and
- * `leaseExpiresAt` are the truth of the queue: only the statements in recordingClaims.ts change them.
+ * `leaseExpiresAt` are the truth of the queue: only the statements in recordingClaims.ts and analyseAgain change them.
  */
 export class Recording extends Model<InferAttributes<Recording>, InferCreationAttributes<Recording>> {
   declare id: CreationOptional<string>;
@@ -85,6 +85,13 @@ export class Recording extends Model<InferAttributes<Recording>, InferCreationAt
     return Recording.findOne({ where: key, transaction });
   }
 
+  /** Bytes of all originals of a bench. */
+  static async sumBytes(benchId: string): Promise<number> {
+    const total: unknown = await Recording.sum('byteCount', { where: { benchId } });
+    // A sum of BIGINT arrives as text; null without rows.
+    return Number(total ?? 0);
+  }
+
   /** The first of the bench with these very bytes. */
   static loadOldestBySha256(
     bytes: { readonly benchId: string; readonly sha256: Buffer },
@@ -113,7 +120,7 @@ Recording.init(
       allowNull: false,
       // BIGINT arrives as a string; the upload limit keeps it far below 2^53.
       get() {
-        return Number(this.getDataValue('byteCount'));
+        return Number(String(this.getDataValue('byteCount')));
       },
     },
     sha256: binaryColumn(),

@@ -24,6 +24,11 @@ export class Review extends Model<InferAttributes<Review>, InferCreationAttribut
   declare createdAt: CreationOptional<Date>;
   declare reviewer?: NonAttribute<Account>;
 
+  static async loadWithReviewer(where: { readonly id: string; readonly benchId: string }): Promise<ReviewWithReviewer> {
+    const review = await Review.findOne({ where, include: [WITH_REVIEWER], rejectOnEmpty: true });
+    return review as ReviewWithReviewer;
+  }
+
   /** Of each of these readings the review that counts, by the id of the reading. */
   static async listNewestByReadings(
     benchIds: readonly string[],
@@ -32,7 +37,7 @@ export class Review extends Model<InferAttributes<Review>, InferCreationAttribut
     if (readingIds.length === 0) return new Map();
     const reviews = await Review.findAll({
       where: { benchId: [...benchIds], readingId: [...readingIds] },
-      include: [{ association: 'reviewer', attributes: ['id', 'name'], required: true }],
+      include: [WITH_REVIEWER],
       order: [
         ['createdAt', 'ASC'],
         ['id', 'ASC'],
@@ -42,6 +47,8 @@ export class Review extends Model<InferAttributes<Review>, InferCreationAttribut
     return new Map(reviews.map((review) => [review.readingId, review as ReviewWithReviewer]));
   }
 }
+
+const WITH_REVIEWER = { association: 'reviewer', attributes: ['id', 'name'], required: true };
 
 export type ReviewWithReviewer = Review & { reviewer: Account };
 

@@ -74,13 +74,13 @@ interface StoreRowOptions {
 
 async function storeRow(options: StoreRowOptions): Promise<CreatedRecording> {
   const { row, upload, storage } = options;
-  let isWritten = false;
+  const progress = { isWritten: false };
   try {
     const result = await transactionGate(() =>
       inTransaction(async (transaction) => {
-        isWritten = false;
+        progress.isWritten = false;
         const created = await writeRow(options, transaction);
-        isWritten = created.created;
+        progress.isWritten = created.created;
         return created;
       }),
     );
@@ -89,7 +89,7 @@ async function storeRow(options: StoreRowOptions): Promise<CreatedRecording> {
     return result;
   } catch (error) {
     // An error after everything was written came with COMMIT: the row may be there, so its file must stay.
-    if (!isWritten) await storage.remove(row.blobId);
+    if (!progress.isWritten) await storage.remove(row.blobId);
     const earlier = error instanceof UniqueConstraintError ? await loadEarlier(row) : null;
     if (earlier === null) throw error;
     return earlierOrRefused(earlier, upload);

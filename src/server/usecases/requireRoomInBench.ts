@@ -25,7 +25,7 @@ export async function requireRoomInBench(benchId: string, incomingBytes: number)
       retryAfterSeconds: WAITING_RETRY_SECONDS,
     });
   }
-  const keptBytes = Number(await Recording.sum('byteCount', { where: { benchId } }));
+  const keptBytes = await Recording.sumBytes(benchId);
   if (keptBytes + incomingBytes <= BENCH_MAXIMUM_BYTES) return;
   throw storageFull(
     `This bench keeps ${byteText(keptBytes)} of at most ${byteText(BENCH_MAXIMUM_BYTES)}. ` +

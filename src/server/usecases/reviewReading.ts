@@ -1,7 +1,6 @@
 import type { ReviewRequest } from '#lib/schemas/reading.ts';
 import { inTransaction } from '../database/inTransaction.ts';
 import { forbidden, notFound } from '../errors.ts';
-import type { Account } from '../models/Account.ts';
 import { Reading } from '../models/Reading.ts';
 import { Review, type ReviewWithReviewer } from '../models/Review.ts';
 import { readableBenchIds } from '../policies/abilities.ts';
@@ -30,7 +29,7 @@ export async function reviewReading({ actor, readingId, request }: ReviewReading
   const recording = await loadReadableRecording(actor, reading.recordingId);
   if (!recordingPolicy.canReview(actor, recording)) throw forbidden();
   const { id: recordingId, benchId } = recording;
-  const review = await inTransaction(async (transaction) => {
+  const id = await inTransaction(async (transaction) => {
     const { decision, rpm, reason } = request;
     const row = { benchId, recordingId, readingId, reviewerId: actor.account.id, decision, reason };
     const created = await Review.create({ ...row, shaftSpeedRpm: rpm ?? null }, { transaction });
@@ -38,8 +37,7 @@ export async function reviewReading({ actor, readingId, request }: ReviewReading
     const object = { type: 'reading', id: readingId };
     const line = { action: 'reading.reviewed', accountId: actor.account.id, benchId, object, details: { decision } };
     await audit(line, transaction);
-    return created;
+    return created.id;
   });
-  review.reviewer = actor.account as Account;
-  return review as ReviewWithReviewer;
+  return Review.loadWithReviewer({ id, benchId });
 }

@@ -198,11 +198,11 @@ describe('POST /api/v1/recordings, forms', () => {
     const sent = openUpload(bench.member, { 'transfer-encoding': 'chunked' });
     const answer = answerTo(sent);
     const block = Buffer.alloc(1_000_000);
-    let isAnswered = false;
+    const progress = { isAnswered: false };
     let sentBytes = 0;
-    void answer.then(() => (isAnswered = true));
+    void answer.then(() => (progress.isAnswered = true));
     sent.write(start);
-    while (!isAnswered && sentBytes < 2 * MAXIMUM_UPLOAD_BYTES) {
+    while (!progress.isAnswered && sentBytes < 2 * MAXIMUM_UPLOAD_BYTES) {
       sentBytes += block.length;
       if (!sent.write(block)) await Promise.race([once(sent, 'drain'), answer]);
     }

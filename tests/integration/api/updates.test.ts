@@ -1,4 +1,6 @@
 import { randomBytes, randomUUID } from 'node:crypto';
+import { Readable } from 'node:stream';
+import type { ReadableStream as NodeReadableStream } from 'node:stream/web';
 import { setTimeout as pause } from 'node:timers/promises';
 import { afterEach, beforeAll, describe, expect, it } from 'vitest';
 import { updateEvent, type UpdateEvent } from '#lib/schemas/update.ts';
@@ -12,6 +14,7 @@ import { wavFile } from '#tests/factories/wavFile.ts';
 import { apiClient, baseUrl, signInCookie } from '#tests/support/apiClient.ts';
 import { expectProblem } from '#tests/support/expectProblem.ts';
 import { upload } from '#tests/support/uploads.ts';
+import { watchStatements } from '#tests/support/watchStatements.ts';
 
 /** The promise: half a second between looks, and a little for the queries on a busy machine. */
 const LATENCY_SECONDS = 0.9;
@@ -41,8 +44,9 @@ class TestStream {
   async #read(response: Response): Promise<void> {
     let text = '';
     const decoder = new TextDecoder();
-    for await (const chunk of response.body ?? []) {
-      text += decoder.decode(chunk as Uint8Array, { stream: true });
+    if (response.body === null) return;
+    for await (const chunk of Readable.fromWeb(response.body as NodeReadableStream) as AsyncIterable<Uint8Array>) {
+      text += decoder.decode(chunk, { stream: true });
       const blocks = text.split('\n\n');
       text = blocks.pop() ?? '';
       for (const block of blocks) this.#take(block);
@@ -148,13 +152,9 @@ describe('GET /api/v1/updates', () => {
 describe('updatesFeed', () => {
   it('asks the database twice a second for 100 listeners, and not at all for none', async () => {
     let queryCount = 0;
-    const count = (statement: string) => {
+    const stopWatch = watchStatements((statement) => {
       if (/outbox|auth_sessions/.test(statement)) queryCount += 1;
-    };
-    const { logging } = database.options;
-    database.options.logging = (statement) => {
-      count(statement);
-    };
+    });
     const listener = () => ({
       credential: { via: 'token', secretHash: randomBytes(32) } as const,
       onEvents: () => undefined,
@@ -170,6 +170,6 @@ describe('updatesFeed', () => {
     queryCount = 0;
     await pause(1500);
     expect(queryCount).toBe(0);
-    database.options.logging = logging ?? false;
+    stopWatch();
   });
 });

@@ -5,7 +5,6 @@ import { join } from 'node:path';
 import { afterAll, beforeEach, describe, expect, it } from 'vitest';
 import { receiveUpload } from '#http/receiveUpload.ts';
 import { ServerError } from '#server/errors.ts';
-import { database } from '#server/database/connection.ts';
 import { Recording } from '#server/models/Recording.ts';
 import type { Actor } from '#server/policies/actor.ts';
 import { FileStorage } from '#server/storage/fileStorage.ts';
@@ -15,6 +14,7 @@ import { createBenchWithAccounts, type TestBench } from '#tests/factories/accoun
 import { wavFile } from '#tests/factories/wavFile.ts';
 import { faultyStorage, STORAGE_STEPS } from '#tests/support/faultyStorage.ts';
 import { tracesOf } from '#tests/support/traces.ts';
+import { watchStatements } from '#tests/support/watchStatements.ts';
 
 const folder = await mkdtemp(join(tmpdir(), 'ripplebench-faults-'));
 const storage = new FileStorage(folder);
@@ -101,13 +101,10 @@ describe('an upload over a full disk', () => {
 });
 
 describe('an upload over a failing database', () => {
-  const failing = (pattern: RegExp, fail: () => void) => {
-    const { logging } = database.options;
-    database.options.logging = (statement) => {
-      if (pattern.test(statement)) fail();
-    };
-    return () => (database.options.logging = logging ?? false);
-  };
+  const failing = (pattern: RegExp, reason: string) =>
+    watchStatements((statement) => {
+      if (pattern.test(statement)) throw new Error(reason);
+    });
 
   it.each([
     ['the lock of the membership', /FROM `memberships`.*FOR UPDATE/],
@@ -116,9 +113,7 @@ describe('an upload over a failing database', () => {
     ['the audit line', /INSERT INTO `audit_log`/],
   ])('keeps neither row nor file when %s fails', async (_, pattern) => {
     const blobsBefore = await filesIn('blobs');
-    const restore = failing(pattern, () => {
-      throw new Error('injected');
-    });
+    const restore = failing(pattern, 'injected');
     try {
       expect(await codeOf(takeUpload(storage))).toBe('Error: injected');
     } finally {
@@ -131,9 +126,7 @@ describe('an upload over a failing database', () => {
 
   it('keeps the file when COMMIT gives no answer, so that a row that is there has it; the retry makes one row', async () => {
     const key = randomUUID();
-    const restore = failing(/: COMMIT;$/, () => {
-      throw new Error('the connection broke at COMMIT');
-    });
+    const restore = failing(/: COMMIT;$/, 'the connection broke at COMMIT');
     const blobsBefore = new Set(await filesIn('blobs'));
     try {
       expect(await codeOf(takeUpload(storage, key))).toMatch(/COMMIT/);
@@ -152,9 +145,13 @@ describe('an upload over a failing database', () => {
 describe('a bench with too much', () => {
   it('refuses the 1001st waiting recording with 429, the numbers and when to try again, but not a repeated one', async () => {
     const { recording } = await takeUpload(storage, 'first');
-    const { id: _id, idempotencyKey: _key, ...columns } = recording.get();
     // More than enough, because the worker of the test run may take some of them at once.
-    const rows = Array.from({ length: 1200 }, () => ({ ...columns, idempotencyKey: null, state: 'queued' as const }));
+    const rows = Array.from({ length: 1200 }, () => ({
+      ...recording.get(),
+      id: randomUUID(),
+      idempotencyKey: null,
+      state: 'queued' as const,
+    }));
     await Recording.bulkCreate(rows);
     const error = await takeUpload(storage).catch((e: unknown) => e);
     const again = await takeUpload(storage, 'first');
