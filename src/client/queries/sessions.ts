@@ -1,6 +1,5 @@
 import { mutationOptions, queryOptions, type QueryClient } from '@tanstack/react-query';
 import { request } from '#client/api/request.ts';
-import { pageOf } from '#lib/schemas/page.ts';
 import {
   sessionResultView,
   sessionView,
@@ -25,12 +24,6 @@ export const sessionResultQuery = (sessionId: string) =>
   queryOptions({
     queryKey: [...sessionKeys.one(sessionId), 'result'] as const,
     queryFn: ({ signal }) => request({ path: `/sessions/${sessionId}/result`, schema: sessionResultView, signal }),
-  });
-
-export const sessionsQuery = (benchId: string) =>
-  queryOptions({
-    queryKey: [...sessionKeys.lists, benchId] as const,
-    queryFn: ({ signal }) => request({ path: '/sessions', search: { benchId }, schema: pageOf(sessionView), signal }),
   });
 
 export const createSessionMutation = (queryClient: QueryClient) =>

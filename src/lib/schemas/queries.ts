@@ -28,7 +28,6 @@ const pageQuery = {
 };
 
 export const listOfBenchQuery = z.strictObject({ ...pageQuery, benchId: z.optional(identifier) });
-export type ListOfBenchQuery = z.infer<typeof listOfBenchQuery>;
 
 export const listRecordingsQuery = z.strictObject({
   ...pageQuery,
@@ -38,4 +37,3 @@ export const listRecordingsQuery = z.strictObject({
   status: z.optional(z.enum(RECORDING_STATUSES, `Must be one of ${RECORDING_STATUSES.join(', ')}.`)),
   needsPerson: z.optional(truth),
 });
-export type ListRecordingsQuery = z.infer<typeof listRecordingsQuery>;

@@ -3,8 +3,6 @@ import { MOTIONS, NO_ROTATION_REASONS, READING_WARNINGS } from '../analysis/read
 import { SERIES_NAMES } from '../analysis/series.ts';
 import { eventsPerTurn, expectedOrders, note, shaftSpeedRpm } from './fields.ts';
 
-export const ANALYSIS_STATUSES = ['measured', 'no-rotation', 'failed'] as const;
-
 const seconds = z.number().check(z.gte(0), z.lte(600));
 
 /** Settings of one analysis; what is left out comes from the recording, then from its build. */
