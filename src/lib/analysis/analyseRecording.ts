@@ -1,6 +1,7 @@
 import { rpmFromEventHertz } from '#lib/units/rotation.ts';
 import { fractionFromPpm } from '#lib/units/ratios.ts';
 import { candidateReason } from './candidateReason.ts';
+import { checkAnalysisInput } from './checkAnalysisInput.ts';
 import { chooseChannel } from './chooseChannel.ts';
 import type { ChosenSignal } from './chooseChannel.ts';
 import { confidenceOf } from './confidence.ts';
@@ -53,7 +54,7 @@ const MOST_CANDIDATES = 8;
  * @throws {RangeError} when there is no channel or a setting is out of its range
  */
 export function analyseRecording(input: AnalysisInput): Analysis {
-  checkInput(input);
+  checkAnalysisInput(input);
   const { settings, sampleRateHz } = input;
   const firstSample = Math.round((settings.fromSeconds ?? 0) * sampleRateHz);
   const endSample = settings.toSeconds === null ? undefined : Math.round(settings.toSeconds * sampleRateHz);
@@ -150,21 +151,4 @@ function stillnessOf(signal: ChosenSignal): NoRotationReason {
 /** A clock that runs fast takes more samples in a second than it says, so that every pitch seems low. */
 function clockFactorOf({ clockCorrectionPpm }: AnalysisSettings): number {
   return 1 + fractionFromPpm(clockCorrectionPpm ?? 0);
-}
-
-function checkInput({ channels, sampleRateHz, settings }: AnalysisInput): void {
-  const [first] = channels;
-  if (!first) throw new RangeError('analyseRecording: channels must hold at least one channel');
-  if (channels.some((channel) => channel.length !== first.length)) {
-    throw new RangeError('analyseRecording: channels must be equally long');
-  }
-  if (!(sampleRateHz > 0)) throw new RangeError(`analyseRecording: sampleRateHz must be > 0, got ${sampleRateHz}`);
-  if (!(settings.eventsPerTurn > 0)) {
-    throw new RangeError(`analyseRecording: eventsPerTurn must be > 0, got ${settings.eventsPerTurn}`);
-  }
-  if (!(settings.minimumRpm > 0 && settings.maximumRpm > settings.minimumRpm)) {
-    throw new RangeError(
-      `analyseRecording: 0 < minimumRpm < maximumRpm must hold, got ${settings.minimumRpm} and ${settings.maximumRpm}`,
-    );
-  }
 }

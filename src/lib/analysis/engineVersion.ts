@@ -1,2 +1,2 @@
 /** Version of the measurement method. Any change that can move a figure raises it. */
-export const ENGINE_VERSION = '0.1.0';
+export const ENGINE_VERSION = '0.2.0';

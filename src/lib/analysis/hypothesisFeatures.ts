@@ -1,5 +1,6 @@
 import { lineLevel } from '#lib/signal/orderLevels.ts';
-import type { OrderLevels, OrderPeak } from '#lib/signal/orderLevels.ts';
+import type { OrderLevels } from '#lib/signal/orderLevels.ts';
+import type { OrderPeak } from '#lib/signal/orderPeaks.ts';
 import { matchPeaks } from './peakMatch.ts';
 import type { PeakMatch } from './peakMatch.ts';
 

@@ -1,4 +1,5 @@
-import type { OrderLevels, OrderPeak } from '#lib/signal/orderLevels.ts';
+import type { OrderLevels } from '#lib/signal/orderLevels.ts';
+import type { OrderPeak } from '#lib/signal/orderPeaks.ts';
 
 /** How the strongest lines of a spectrum lie on the orders of one hypothesis. */
 export interface PeakMatch {

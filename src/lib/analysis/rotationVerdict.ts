@@ -28,7 +28,7 @@ const HUM_SHARE = 0.8;
 /** Lines within this many nepers of the strongest are main lines; what is weaker may be their skirts. */
 const MAIN_LINE_NEPERS = 5;
 /** How near an event rate must come to a multiple of the mains to be hum itself. */
-const HUM_TOLERANCE = 4e-4;
+const HUM_TOLERANCE = 8e-4;
 /** Phase scatter of the event rate about a straight line, cycles: the grid keeps time far better than any motor. */
 const HUM_SCATTER_CYCLES = 0.005;
 /** Change of slope, per cent a frame, above which no shaft with inertia makes the track. */

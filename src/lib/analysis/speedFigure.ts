@@ -21,11 +21,11 @@ const UNKNOWN_CLOCK_PPM = 100;
 /** What remains of it after a correction was measured. */
 const CORRECTED_CLOCK_PPM = 10;
 /** Wander between segments is not white, so that two standard errors cover too little; found by calibration. */
-const COVERAGE_FACTOR = 3;
+const COVERAGE_FACTOR = 3.6;
 /** Above this ratio of phase scatter to noise the speed really wandered, and a straight line is no longer its phase. */
 const WANDER_LIMIT = 2.5;
 /** How well the median of a wandering speed is known, in units of its range. */
-const WANDER_FRACTION = 0.12;
+const WANDER_FRACTION = 0.15;
 /** A varying speed's median moves with how much of the start and the end is heard: by this much of the time. */
 const MEDIAN_SHIFT = 0.03;
 

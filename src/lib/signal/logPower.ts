@@ -8,9 +8,9 @@ const LEAST_RELATIVE_POWER = 1e-10;
  * @param power shape [binCount], ≥ 0
  * @returns a new Float32Array, nepers of power; all equal for silence
  */
-export function logPower(power: ArrayLike<number>): Float32Array {
+export function logPower(power: Float64Array): Float32Array {
   let strongest = Number.MIN_VALUE;
-  for (let bin = 0; bin < power.length; bin++) strongest = Math.max(strongest, power[bin] as number);
+  for (const value of power) strongest = Math.max(strongest, value);
   const least = LEAST_RELATIVE_POWER * strongest + Number.MIN_VALUE;
   const logarithms = new Float32Array(power.length);
   for (let bin = 0; bin < logarithms.length; bin++) logarithms[bin] = Math.log((power[bin] as number) + least);

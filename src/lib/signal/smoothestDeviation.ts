@@ -93,6 +93,19 @@ function addCoherence(
   }
 }
 
+/** The grid point from which a move to `point` leaves the highest value. */
+function bestOrigin(values: Float64Array, point: number, stiffness: number): number {
+  let best = -Infinity;
+  let origin = 0;
+  for (let from = 0; from < values.length; from++) {
+    const value = (values[from] as number) - stiffness * (point - from) ** 2;
+    if (value <= best) continue;
+    best = value;
+    origin = from;
+  }
+  return origin;
+}
+
 /** Best sequence of grid points with a quadratic cost of movement (Viterbi 1967). */
 function stiffestPath(rows: readonly Float64Array[], stiffness: number): number[] {
   const pointCount = rows[0]?.length ?? 0;
@@ -102,15 +115,9 @@ function stiffestPath(rows: readonly Float64Array[], stiffness: number): number[
     const origin = new Uint8Array(pointCount);
     const next = new Float64Array(pointCount);
     for (let point = 0; point < pointCount; point++) {
-      let best = -Infinity;
-      for (let from = 0; from < pointCount; from++) {
-        const value = (values[from] as number) - stiffness * (point - from) ** 2;
-        if (value > best) {
-          best = value;
-          origin[point] = from;
-        }
-      }
-      next[point] = best + (row[point] as number);
+      const from = bestOrigin(values, point, stiffness);
+      origin[point] = from;
+      next[point] = (values[from] as number) - stiffness * (point - from) ** 2 + (row[point] as number);
     }
     origins.push(origin);
     values = next;
