@@ -17,7 +17,7 @@ import mariadb from 'mariadb';
 
 const POLL_MILLISECONDS = 20;
 /** A busy machine starts a Node process and its threads in a few seconds. */
-export const DEADLINE_SECONDS = 30;
+const DEADLINE_SECONDS = 30;
 
 /** Waits for something to come true. @throws Error naming it when it does not within the time */
 export async function until<Value>(

@@ -24,7 +24,7 @@ export const JOBS = {
   },
 } as const;
 
-export type JobName = keyof typeof JOBS;
+type JobName = keyof typeof JOBS;
 export type JobPayload<Name extends JobName> = z.infer<(typeof JOBS)[Name]['payload']>;
 
 /** One number a wish for an analysis and a fresh one for each ring again, so that no ring is taken for an old one. */

@@ -40,7 +40,7 @@ export async function analyseAgain({ actor, recordingId, request }: AnalyseAgain
     if (isUnderWay(current, wantedSettings, recording)) return null;
     const next = { generation: current.generation + 1, attempt: 0 };
     const freed = { state: 'queued' as const, fenceToken: null, leaseExpiresAt: null, queuedAt: fn('NOW', 3) };
-    const cleared = { errorCode: null, errorMessage: null };
+    const cleared = { errorCode: null, errorMessage: null, decoderCrashCount: 0 };
     await Recording.update({ ...next, ...freed, ...cleared, wantedSettings }, { where, transaction });
     const { benchId, sessionId } = current;
     await announceRecording({ recordingId, benchId, sessionId, ...next }, 'queued', transaction);

@@ -1,7 +1,6 @@
-import { mkdtempSync, rmSync, writeFileSync } from 'node:fs';
-import { tmpdir } from 'node:os';
-import { join } from 'node:path';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { floatSamples, wavBytes } from '#tests/fixtures/media/wavBytes.ts';
+import { createMediaFolder } from '#tests/fixtures/media/makeMedia.ts';
 import { BUZZ, BUZZ_RPM, encode, makeBuzz } from '#tests/support/labSounds.ts';
 import { openWorkerLab } from '#tests/support/workerLab.ts';
 
@@ -14,7 +13,7 @@ const { countLiveWorkers } = await import('#server/models/workerHeartbeats.ts');
 /** From the last byte to the reading, for a recording of 10 s on an idle system. */
 const BUDGET_SECONDS = 3;
 
-const folder = mkdtempSync(join(tmpdir(), 'ripplebench-sounds-'));
+const folder = await createMediaFolder();
 let actor: Awaited<ReturnType<typeof addBench>>;
 
 beforeAll(async () => {
@@ -23,7 +22,7 @@ beforeAll(async () => {
 });
 afterAll(async () => {
   await lab.close();
-  rmSync(folder, { recursive: true });
+  await folder.remove();
 });
 
 describe('analyseRecording', () => {
@@ -52,7 +51,7 @@ describe('analyseRecording', () => {
   });
 
   it('reads what only ffmpeg can decode', async () => {
-    const path = await encode(await makeBuzz(folder, 'plain.wav', 4), join(folder, 'phone.m4a'));
+    const path = await encode(folder, await makeBuzz(folder, 'plain.wav', 4), 'phone.m4a');
     const recording = await untilState(await upload(actor, path, BUZZ), 'done');
     const [reading] = await readingsOf(recording);
     expect(Math.abs((reading?.shaftSpeedRpm ?? 0) / BUZZ_RPM - 1)).toBeLessThan(0.01);
@@ -74,10 +73,9 @@ describe('analyseRecording', () => {
 
   it('stores an expected failure with its code and does not try again', async () => {
     // Float samples that are no numbers: only decoding shows it.
-    const path = join(folder, 'not-numbers.wav');
-    const { floatSamples, wavBytes } = await import('#tests/fixtures/media/wavBytes.ts');
     const data = floatSamples(Array.from({ length: 48_000 }, () => Number.NaN));
-    writeFileSync(path, wavBytes({ formatTag: 3, bitsPerSample: 32, sampleRateHz: 48_000, data }));
+    const bytes = wavBytes({ formatTag: 3, bitsPerSample: 32, sampleRateHz: 48_000, data });
+    const path = await folder.write('not-numbers.wav', bytes);
     const recording = await untilState(await upload(actor, path), 'failed');
     expect(recording).toMatchObject({ errorCode: 'not-finite', attempt: 1, currentReadingId: null, fenceToken: null });
     expect(recording.errorMessage).toMatch(/\S/);

@@ -1,9 +1,7 @@
-import { mkdtempSync, rmSync } from 'node:fs';
-import { tmpdir } from 'node:os';
-import { join } from 'node:path';
 import { QueryTypes } from 'sequelize';
 import { afterAll, beforeAll, beforeEach, describe, expect, it } from 'vitest';
 import { DEFAULT_ANALYSIS_SETTINGS } from '#lib/analysis/settings.ts';
+import { createMediaFolder } from '#tests/fixtures/media/makeMedia.ts';
 import { makeBuzz } from '#tests/support/labSounds.ts';
 import { openWorkerLab, until } from '#tests/support/workerLab.ts';
 
@@ -13,7 +11,9 @@ const { database } = await import('#server/database/connection.ts');
 const { withDatabaseLock } = await import('#server/database/withDatabaseLock.ts');
 const { renewLease } = await import('#server/models/recordingClaims.ts');
 const { claimRecording } = await import('#server/usecases/claimRecording.ts');
+const { analyseAgain } = await import('#server/usecases/analyseAgain.ts');
 const { failRecording } = await import('#server/usecases/failRecording.ts');
+const { noteDecoderCrash } = await import('#server/usecases/noteDecoderCrash.ts');
 const { requeueExpired } = await import('#server/usecases/requeueExpired.ts');
 const { ringUndelivered } = await import('#server/usecases/ringUndelivered.ts');
 const { storeReading } = await import('#server/usecases/storeReading.ts');
@@ -22,7 +22,7 @@ type LabRecording = Awaited<ReturnType<typeof upload>>;
 type Claim = NonNullable<Awaited<ReturnType<typeof claimRecording>>>;
 
 const leaseSeconds = 30;
-const folder = mkdtempSync(join(tmpdir(), 'ripplebench-claims-'));
+const folder = await createMediaFolder();
 let path = '';
 
 beforeAll(async () => {
@@ -31,7 +31,7 @@ beforeAll(async () => {
 beforeEach(() => write("/* every bench: a clean queue for each test */ UPDATE recordings SET state = 'done'"));
 afterAll(async () => {
   await lab.close();
-  rmSync(folder, { recursive: true });
+  await folder.remove();
 });
 
 async function write(sql: string, replacements: Record<string, string | number> = {}): Promise<void> {
@@ -184,6 +184,30 @@ describe('requeueExpired', () => {
     }
     expect(await reload(recording)).toMatchObject({ state: 'failed', errorCode: 'worker-lost', fenceToken: null });
     expect((await toldStates(recording)).at(-1)).toBe('failed');
+  });
+});
+
+describe('noteDecoderCrash', () => {
+  it('puts a recording back after the first crash, fails it after the second, and forgets when asked again', async () => {
+    const actor = await addBench();
+    const recording = await upload(actor, path);
+    expect(await noteDecoderCrash({ claim: await mustClaim() })).toBe('queued');
+    const second = await mustClaim();
+    expect(await noteDecoderCrash({ claim: second })).toBe('failed');
+    expect(await noteDecoderCrash({ claim: second })).toBe('lost');
+    expect(await reload(recording)).toMatchObject({
+      state: 'failed',
+      errorCode: 'cannot-decode',
+      decoderCrashCount: 2,
+    });
+    await analyseAgain({ actor, recordingId: recording.id, request: {} });
+    expect(await reload(recording)).toMatchObject({
+      state: 'queued',
+      errorCode: null,
+      decoderCrashCount: 0,
+      attempt: 0,
+    });
+    expect(await noteDecoderCrash({ claim: await mustClaim() })).toBe('queued');
   });
 });
 

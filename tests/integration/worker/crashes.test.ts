@@ -1,9 +1,7 @@
-import { mkdtempSync, rmSync } from 'node:fs';
-import { tmpdir } from 'node:os';
-import { join } from 'node:path';
 import { QueryTypes } from 'sequelize';
 import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest';
 import { descendantsOf } from '#tests/fixtures/media/descendants.ts';
+import { createMediaFolder } from '#tests/fixtures/media/makeMedia.ts';
 import { BUZZ, encode, makeBuzz } from '#tests/support/labSounds.ts';
 import { openWorkerLab, until } from '#tests/support/workerLab.ts';
 
@@ -17,9 +15,9 @@ type LabRecording = Awaited<ReturnType<typeof upload>>;
 /** The shortest lease there is; a lost worker is replaced after it. */
 const LEASE_SECONDS = 2;
 /** Long enough that its analysis outlasts the lease several times. */
-const LONG_SECONDS = 420;
+const LONG_SECONDS = 300;
 
-const folder = mkdtempSync(join(tmpdir(), 'ripplebench-crashes-'));
+const folder = await createMediaFolder();
 let actor: Awaited<ReturnType<typeof addBench>>;
 let shortPath = '';
 let longPath = '';
@@ -32,7 +30,7 @@ beforeAll(async () => {
 afterEach(() => lab.endWorkers());
 afterAll(async () => {
   await lab.close();
-  rmSync(folder, { recursive: true });
+  await folder.remove();
 });
 
 /** Uploads the long recording and waits until a worker has claimed it. */
@@ -132,7 +130,7 @@ describe('a worker that is asked to stop', () => {
 describe('a file that kills its decoder', () => {
   it('is tried twice, then fails with cannot-decode, and the worker goes on', async () => {
     const worker = await lab.startWorker({ leaseSeconds: 30 });
-    const path = await encode(longPath, join(folder, 'long.flac'));
+    const path = await encode(folder, longPath, 'long.flac');
     const recording = await upload(actor, path, BUZZ);
     const killDecoder = async (): Promise<boolean> => {
       const tools = (await descendantsOf(recording.blobId)).filter(({ name }) => name === 'ffmpeg');

@@ -1,9 +1,7 @@
-import { mkdtempSync, rmSync } from 'node:fs';
-import { tmpdir } from 'node:os';
-import { join } from 'node:path';
 import { Queue } from 'bullmq';
 import { Redis } from 'ioredis';
 import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest';
+import { createMediaFolder } from '#tests/fixtures/media/makeMedia.ts';
 import { BUZZ, makeBuzz } from '#tests/support/labSounds.ts';
 import { openWorkerLab, until } from '#tests/support/workerLab.ts';
 
@@ -18,7 +16,7 @@ const POLLED_WITHIN_SECONDS = 5;
 /** The budget of a bell, and the time of a busy machine to come back to us. */
 const RING_LIMIT_MILLISECONDS = 300 + 100;
 
-const folder = mkdtempSync(join(tmpdir(), 'ripplebench-doorbell-'));
+const folder = await createMediaFolder();
 let actor: Awaited<ReturnType<typeof addBench>>;
 let path = '';
 
@@ -29,7 +27,7 @@ beforeAll(async () => {
 afterEach(() => lab.endWorkers());
 afterAll(async () => {
   await lab.close();
-  rmSync(folder, { recursive: true });
+  await folder.remove();
 });
 
 async function withRedis<Result>(body: (redis: Redis) => Promise<Result>): Promise<Result> {

@@ -1,7 +1,7 @@
-import { mkdtempSync, readdirSync, rmSync, utimesSync } from 'node:fs';
-import { tmpdir } from 'node:os';
+import { readdirSync, utimesSync } from 'node:fs';
 import { join } from 'node:path';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
+import { createMediaFolder } from '#tests/fixtures/media/makeMedia.ts';
 import { makeBuzz } from '#tests/support/labSounds.ts';
 import { openWorkerLab } from '#tests/support/workerLab.ts';
 
@@ -11,7 +11,7 @@ const { settings } = await import('#server/env.ts');
 const { blobStorage } = await import('#server/storage/blobStorage.ts');
 const { sweepStorage } = await import('#server/usecases/sweepStorage.ts');
 
-const folder = mkdtempSync(join(tmpdir(), 'ripplebench-sweep-'));
+const folder = await createMediaFolder();
 const storageFolder = (...names: string[]): string => join(settings().dataFolder, 'storage', ...names);
 let actor: Awaited<ReturnType<typeof addBench>>;
 let path = '';
@@ -37,7 +37,7 @@ beforeAll(async () => {
 });
 afterAll(async () => {
   await lab.close();
-  rmSync(folder, { recursive: true });
+  await folder.remove();
 });
 
 describe('sweepStorage', () => {
