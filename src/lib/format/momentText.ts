@@ -7,6 +7,8 @@
  * @example momentText('2026-12-01T14:31:05.120Z', 'UTC') // '1 Dec 2026, 14:31 UTC'
  */
 export function momentText(isoText: string, timeZone: string): string {
+  // eslint-disable-next-line no-restricted-globals -- a given moment is taken apart; no clock is read
+  const moment = new Date(isoText);
   const text = new Intl.DateTimeFormat('en-GB', {
     day: 'numeric',
     month: 'short',
@@ -14,6 +16,6 @@ export function momentText(isoText: string, timeZone: string): string {
     hour: '2-digit',
     minute: '2-digit',
     timeZone,
-  }).format(new Date(isoText));
+  }).format(moment);
   return timeZone === 'UTC' ? `${text} UTC` : text;
 }
