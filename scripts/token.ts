@@ -35,7 +35,7 @@ export async function main(programArguments: string[]): Promise<number> {
 
 async function printToken({ email, name, access }: Options): Promise<number> {
   const account = await Account.loadByEmail(email);
-  if (account === null || account.disabledAt !== null) {
+  if (account?.disabledAt !== null) {
     process.stderr.write(`There is no account ${email}. Make one with: npm run account -- --email E --bench NAME\n`);
     return EXIT_UNKNOWN_ACCOUNT;
   }

@@ -5,7 +5,7 @@ import { logger } from '#server/logger.ts';
 
 const RETRY_AFTER_SECONDS = 5;
 /** SQLSTATE class 08: the connection failed. MariaDB 1205: lock wait; 1213: deadlock; 1969: statement time limit. */
-const CONNECTION_SQLSTATE = /^08/;
+const CONNECTION_SQLSTATE_CLASS = '08';
 const BUSY_ERROR_NUMBERS: readonly unknown[] = [1205, 1213, 1969];
 
 /** What the client is told about an error. Nothing of an unexpected one leaves the server but the request's id. */
@@ -74,5 +74,8 @@ function isDatabaseAway(error: BaseError): boolean {
     errno?: unknown;
     sqlState?: unknown;
   };
-  return BUSY_ERROR_NUMBERS.includes(errno) || (typeof sqlState === 'string' && CONNECTION_SQLSTATE.test(sqlState));
+  return (
+    BUSY_ERROR_NUMBERS.includes(errno) ||
+    (typeof sqlState === 'string' && sqlState.startsWith(CONNECTION_SQLSTATE_CLASS))
+  );
 }

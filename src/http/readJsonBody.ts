@@ -4,7 +4,7 @@ import { ServerError } from '#server/errors.ts';
 import { linger } from './linger.ts';
 
 /** Above the longest note that any call takes, so that an overlong field is named instead of cut off. */
-export const JSON_BODY_MAXIMUM_BYTES = 2_000_000;
+const JSON_BODY_MAXIMUM_BYTES = 2_000_000;
 
 const JSON_CONTENT_TYPE = /^application\/json(?:\s*;\s*charset=(?:"?utf-8"?))?\s*$/i;
 

@@ -7,7 +7,8 @@ import { requestContext } from '#server/requestContext.ts';
 
 /** Names the request, times it, and leaves one log line. Neither holds a query string, an address or a name. */
 export const observe: MiddlewareHandler = (context, next) => {
-  const requestId = context.locals.requestId ?? uuidV4();
+  // Astro runs the middleware again for its error pages; that is still the same request.
+  const requestId = 'requestId' in context.locals ? context.locals.requestId : uuidV4();
   context.locals.requestId = requestId;
   return requestContext.run({ requestId }, async () => {
     const startSeconds = clock.monotonicSeconds();

@@ -75,6 +75,6 @@ export function jsonSchema(schema: z.ZodMiniType): JsonSchema {
   return withoutDialect(z.toJSONSchema(schema, { io: 'input', unrepresentable: 'any' }));
 }
 
-function withoutDialect({ $schema: _dialect, $id: _id, ...schema }: JsonSchema): JsonSchema {
-  return schema;
+function withoutDialect(schema: JsonSchema): JsonSchema {
+  return Object.fromEntries(Object.entries(schema).filter(([key]) => key !== '$schema' && key !== '$id'));
 }

@@ -14,11 +14,6 @@ const ROLES_BY_ABILITY = {
 
 export type Ability = keyof typeof ROLES_BY_ABILITY;
 
-/** A record that lives in a bench. */
-export interface BenchOwned {
-  readonly benchId: string;
-}
-
 export function roleHasAbility(role: Role, ability: Ability): boolean {
   return (ROLES_BY_ABILITY[ability] as readonly Role[]).includes(role);
 }

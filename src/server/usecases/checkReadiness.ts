@@ -107,7 +107,8 @@ async function checkRedis(): Promise<boolean> {
   redis.on('error', () => undefined);
   try {
     await redis.connect();
-    return (await redis.ping()) === 'PONG';
+    await redis.ping();
+    return true;
   } finally {
     redis.disconnect();
   }

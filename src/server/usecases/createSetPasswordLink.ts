@@ -5,7 +5,7 @@ import { database } from '../database/connection.ts';
 import { settings } from '../env.ts';
 import { audit } from './audit.ts';
 
-export const SET_PASSWORD_LINK_MINUTES = 30;
+const SET_PASSWORD_LINK_MINUTES = 30;
 
 /**
  * A link with which the holder of an account sets a password, once. Links that were made before stop working.

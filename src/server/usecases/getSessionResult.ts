@@ -18,8 +18,14 @@ export async function getSessionResult(wanted: { actor: Actor; sessionId: string
     purpose: session.purpose,
     ...sessionVerdict(session.purpose, points),
     measuredCount: points.length,
-    points: points.map(({ motor: _motor, ...point }) => point),
+    points: points.map(presentPoint),
   };
+}
+
+/** Which revision of which build it was is only for the reckoning. */
+function presentPoint(point: SessionPoint): SessionResultView['points'][number] {
+  const { recordingId, recordedAt, buildName, supplyVolts, rpm, rpmLow, rpmHigh, confidence, reviewed } = point;
+  return { recordingId, recordedAt, buildName, supplyVolts, rpm, rpmLow, rpmHigh, confidence, reviewed };
 }
 
 /** A person may say that nothing turned, or that the recording is no good. */

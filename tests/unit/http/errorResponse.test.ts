@@ -35,7 +35,7 @@ describe('problemOf', () => {
     expect(JSON.stringify(problem)).not.toMatch(/secret|cannot read|\.ts/);
   });
 
-  it.each([
+  it.each<[string, Error]>([
     ['a full pool', new ConnectionAcquireTimeoutError(new Error('timeout'))],
     ['a refused connection', new ConnectionRefusedError(new Error('ECONNREFUSED'))],
     ['a connection lost in the middle', databaseError({ errno: 45_009, sqlState: '08S01' })],
@@ -49,7 +49,7 @@ describe('problemOf', () => {
     expect(retryAfterSeconds).toBe(5);
   });
 
-  it.each([
+  it.each<[string, Error]>([
     ['a syntax error', databaseError({ errno: 1064, sqlState: '42000' })],
     ['a row that is there already', new UniqueConstraintError({})],
   ])('takes %s for a defect of ours', (_what, error) => {

@@ -3,7 +3,7 @@ import { createWorkLimit } from '#server/auth/createWorkLimit.ts';
 
 /** Work that ends when it is told to. */
 function manualWork() {
-  let end = () => undefined as void;
+  let end: () => void = () => undefined;
   const done = new Promise<void>((resolve) => {
     end = resolve;
   });
