@@ -1,5 +1,6 @@
 import { readdir } from 'node:fs/promises';
 import { join } from 'node:path';
+import { expect } from 'vitest';
 import { AuditEntry } from '#server/models/AuditEntry.ts';
 import { OutboxEvent } from '#server/models/OutboxEvent.ts';
 import { Recording } from '#server/models/Recording.ts';
@@ -27,6 +28,16 @@ const storageFolder = (): string => join(settings().dataFolder, 'storage');
 /** Names of files that are on their way in. */
 export async function temporaryNames(): Promise<string[]> {
   return readdir(join(storageFolder(), 'tmp')).catch(() => []);
+}
+
+/**
+ * Waits until nothing is left of what came in since `before`: uploads of other tests come and go, a forgotten one
+ * stays.
+ */
+export async function expectNoTemporarySince(before: readonly string[]): Promise<void> {
+  const suspects = (await temporaryNames()).filter((name) => !before.includes(name));
+  const left = async () => (await temporaryNames()).filter((name) => suspects.includes(name));
+  await expect.poll(left, { timeout: 10_000 }).toEqual([]);
 }
 
 /** Ids of all stored blobs. */

@@ -74,8 +74,8 @@ interface RawUpload {
 }
 
 /** A request whose every byte the test decides; the answer may come before the body has left. */
-export function openUpload(holder: Holder, headers: RawUpload['headers'] = {}): ClientRequest {
-  const url = new URL(RECORDINGS, baseUrl());
+export function openUpload(holder: Holder, headers: RawUpload['headers'] = {}, site = baseUrl()): ClientRequest {
+  const url = new URL(RECORDINGS, site);
   const all = {
     authorization: `Bearer ${holder.token}`,
     'content-type': `multipart/form-data; boundary=${BOUNDARY}`,
@@ -94,8 +94,12 @@ export async function answerTo(sent: ClientRequest): Promise<ApiAnswer> {
   return { status: response.statusCode ?? 0, headers, text, body: text === '' ? null : JSON.parse(text) };
 }
 
-export function sendRaw(holder: Holder, { body = Buffer.alloc(0), headers }: RawUpload): Promise<ApiAnswer> {
-  const sent = openUpload(holder, { 'content-length': body.length, ...headers });
+export function sendRaw(
+  holder: Holder,
+  { body = Buffer.alloc(0), headers }: RawUpload,
+  site?: string,
+): Promise<ApiAnswer> {
+  const sent = openUpload(holder, { 'content-length': body.length, ...headers }, site);
   const answer = answerTo(sent);
   sent.end(body);
   return answer;

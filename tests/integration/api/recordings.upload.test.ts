@@ -10,7 +10,7 @@ import { createBenchWithAccounts, type TestBench } from '#tests/factories/accoun
 import { wavFile } from '#tests/factories/wavFile.ts';
 import { apiClient, baseUrl, signInCookie } from '#tests/support/apiClient.ts';
 import { expectProblem } from '#tests/support/expectProblem.ts';
-import { blobIds, temporaryNames, tracesOf } from '#tests/support/traces.ts';
+import { blobIds, expectNoTemporarySince, temporaryNames, tracesOf } from '#tests/support/traces.ts';
 import {
   answerTo,
   field,
@@ -34,6 +34,7 @@ const loadRow = (id: string) => Recording.findOne({ where: { id, benchId: bench.
 
 describe('POST /api/v1/recordings', () => {
   it('answers 201 with the SHA-256 of the bytes when row and file are safe', async () => {
+    const before = await temporaryNames();
     const bytes = wavFile({ seed: 100 });
     const answer = await sendUpload(bench.member, { bytes, fileName: 'Lüfter 3 V.wav' });
     expect(answer.status, answer.text).toBe(201);
@@ -45,7 +46,7 @@ describe('POST /api/v1/recordings', () => {
     expect(row.sha256.toString('hex')).toBe(sha256);
     expect(await blobIds()).toContain(row.blobId);
     expect(await tracesOf(bench.benchId)).toMatchObject({ recordings: 1, audits: 1 });
-    expect(await temporaryNames()).toEqual([]);
+    await expectNoTemporarySince(before);
   });
 
   it('reads decimals with point or comma, orders with commas or in JSON, and empty as not given', async () => {
@@ -163,7 +164,7 @@ describe('POST /api/v1/recordings, cut short', () => {
   it.each([0, 0.5, 0.99])(
     'keeps nothing of an upload cut at %d of its bytes, and takes the retry',
     async (fraction) => {
-      const cut = await createBenchWithAccounts();
+      const [before, cut] = [await temporaryNames(), await createBenchWithAccounts()];
       const key = `cut at ${String(fraction)}`;
       const headers = { 'content-length': body.length, 'idempotency-key': key };
       const sent = openUpload(cut.member, headers);
@@ -171,7 +172,7 @@ describe('POST /api/v1/recordings, cut short', () => {
       sent.write(body.subarray(0, Math.floor(fraction * body.length)));
       await new Promise((resolve) => setTimeout(resolve, 100));
       sent.destroy();
-      await expect.poll(temporaryNames, { timeout: 5000 }).toEqual([]);
+      await expectNoTemporarySince(before);
       expect(await tracesOf(cut.benchId)).toEqual({ recordings: 0, events: 0, audits: 0 });
       for (const status of [201, 200]) expect((await sendRaw(cut.member, { body, headers })).status).toBe(status);
     },
@@ -181,12 +182,14 @@ describe('POST /api/v1/recordings, cut short', () => {
 describe('POST /api/v1/recordings, rights that end meanwhile', () => {
   /** Sends all but the end of a file, lets `meanwhile` happen, and sends the rest. */
   async function uploadAround(credentials: Record<string, string>, meanwhile: () => Promise<unknown>) {
+    const before = await temporaryNames();
     const body = Buffer.concat([filePart(wavFile({ seed: 130 })), FORM_END]);
     const sent = openUpload({ token: '' }, { 'content-length': body.length, ...credentials });
     if (credentials.authorization === undefined) sent.removeHeader('authorization');
     const answer = answerTo(sent);
     sent.write(body.subarray(0, body.length - 100));
-    await expect.poll(temporaryNames).not.toEqual([]);
+    const isNew = (name: string) => !before.includes(name);
+    await expect.poll(async () => (await temporaryNames()).some(isNew)).toBe(true);
     await meanwhile();
     sent.end(body.subarray(-100));
     return answer;
@@ -202,11 +205,11 @@ describe('POST /api/v1/recordings, rights that end meanwhile', () => {
     ['the token', ({ member }) => ApiToken.update({ revokedAt: new Date() }, { where: { accountId: member.id } })],
   ];
   it.each(cases)('refuses with 403 when %s was taken', async (_, take) => {
-    const left = await createBenchWithAccounts();
+    const [before, left] = [await temporaryNames(), await createBenchWithAccounts()];
     const answer = await uploadAround({ authorization: `Bearer ${left.member.token}` }, () => take(left));
     expectProblem(answer, 'forbidden');
     expect(await tracesOf(left.benchId)).toEqual({ recordings: 0, events: 0, audits: 0 });
-    expect(await temporaryNames()).toEqual([]);
+    await expectNoTemporarySince(before);
   });
 
   it('refuses with 403 when the sign-in was ended', async () => {
