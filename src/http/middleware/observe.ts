@@ -1,4 +1,4 @@
-import type { APIContext, MiddlewareHandler } from 'astro';
+import type { MiddlewareHandler } from 'astro';
 import { v4 as uuidV4 } from 'uuid';
 import { clock } from '#server/clock.ts';
 import { logger } from '#server/logger.ts';
@@ -11,20 +11,22 @@ export const observe: MiddlewareHandler = (context, next) => {
   const requestId = 'requestId' in context.locals ? context.locals.requestId : uuidV4();
   context.locals.requestId = requestId;
   return requestContext.run({ requestId }, async () => {
+    // An error page has a route of its own; what was asked for is what counts.
+    const { routePattern, request } = context;
     const startSeconds = clock.monotonicSeconds();
     const response = await next();
     response.headers.set('x-request-id', requestId);
-    record(context, response, clock.monotonicSeconds() - startSeconds);
+    const line = { method: request.method, route: routePattern, status: response.status };
+    record(line, requestId, clock.monotonicSeconds() - startSeconds);
     return response;
   });
 };
 
-function record({ request, routePattern, locals }: APIContext, response: Response, elapsedSeconds: number): void {
-  const line = {
-    method: request.method,
-    route: routePattern,
-    status: response.status,
-  };
+function record(
+  line: { method: string; route: string; status: number },
+  requestId: string,
+  elapsedSeconds: number,
+): void {
   countRequest(line, elapsedSeconds);
-  logger().debug({ ...line, elapsedSeconds, requestId: locals.requestId }, 'request');
+  logger().debug({ ...line, elapsedSeconds, requestId }, 'request');
 }

@@ -17,7 +17,7 @@ export const problems: MiddlewareHandler = async (context, next) => {
     await auditDenial(error, context);
     if (isCallOfApi(context)) return errorResponse(error, context.locals.requestId);
     reportError(error, context.locals.requestId);
-    return errorPage(error, context);
+    return errorPage(error, context, next);
   }
 };
 

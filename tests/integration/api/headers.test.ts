@@ -1,4 +1,5 @@
 import { describe, expect, it } from 'vitest';
+import { createBenchWithAccounts } from '#tests/factories/account.ts';
 import { apiClient } from '#tests/support/apiClient.ts';
 import { expectProblem } from '#tests/support/expectProblem.ts';
 
@@ -50,9 +51,22 @@ describe('an address or method that does not exist', () => {
     expect([answer.status, answer.text]).toEqual([200, '']);
   });
 
-  it('answers 404 for a page', async () => {
-    const answer = await anonymous.get('/no-such-page');
-    expect([answer.status, answer.headers.get('content-type')]).toEqual([404, 'text/html']);
+  it('answers 404 for a page, and for a page about a record that is not there', async () => {
+    const { owner } = await createBenchWithAccounts();
+    for (const path of ['/no-such-page', `/builds/${crypto.randomUUID()}`, '/recordings/1', '/set-password/mistyped']) {
+      const answer = await apiClient(owner).get(path);
+      expect([path, answer.status, answer.headers.get('content-type')]).toEqual([path, 404, 'text/html']);
+      expect(answer.headers.get('content-security-policy')).toContain("style-src 'self'");
+      expect(answer.text).toContain(answer.headers.get('x-request-id') ?? 'no id');
+    }
+  });
+
+  it('refuses a form of another site with a page', async () => {
+    const headers = { origin: 'https://elsewhere.example' };
+    const body = new URLSearchParams({ email: 'a@b.example', password: 'x' });
+    const answer = await anonymous.send('/sign-in', { method: 'POST', headers, body });
+    expect([answer.status, answer.headers.get('content-type')]).toEqual([403, 'text/html']);
+    expect(answer.text).toContain('The request came from another site');
   });
 });
 
