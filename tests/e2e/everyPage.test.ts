@@ -75,7 +75,7 @@ describe('every page', () => {
     const { context, page } = await openVisit(browser, { viewport: 'desk', theme: 'light' });
     await signIn(page);
     await page.getByRole('button', { name: 'Dark' }).click();
-    await page.waitForFunction(() => document.documentElement.dataset['theme'] === 'dark');
+    await page.waitForFunction(() => document.documentElement.dataset.theme === 'dark');
     const html = await (await context.request.get('/')).text();
     expect(html).toMatch(/<html[^>]*data-theme="dark"/);
     await context.close();
