@@ -1,3 +1,4 @@
+import { randomUUID } from 'node:crypto';
 import { createServer } from 'node:http';
 import { join, resolve } from 'node:path';
 import { pathToFileURL } from 'node:url';
@@ -30,21 +31,43 @@ const serveStatic = sirv(join(webFolder, 'client'), {
   },
 });
 
-function sendProblem(response, status, code, detail, headers = {}) {
+/** What this server says itself; the codes are those of the catalogue in src/server/errors.ts. */
+const PROBLEMS = {
+  'not-found': { status: 404, title: 'Not found', detail: 'There is nothing at this address.' },
+  'request-timeout': {
+    status: 408,
+    title: 'The upload was too slow',
+    detail: 'Less than 256 bytes a second arrived for a minute. Try again on a better connection.',
+  },
+  internal: {
+    status: 500,
+    title: 'Something went wrong here',
+    detail: 'Try again; if it stays, tell the owner of your bench and name the request id.',
+  },
+  'shutting-down': {
+    status: 503,
+    title: 'The server is restarting',
+    detail: 'Try again in a moment.',
+    headers: { 'Retry-After': '5' },
+  },
+};
+
+function sendProblem(response, code) {
   if (response.headersSent) {
     response.destroy();
     return;
   }
-  const body = JSON.stringify({
-    type: `urn:ripplebench:problem:${code}`,
-    title: detail,
-    status,
-    code,
-    detail,
-    requestId: '',
+  const { status, title, detail, headers } = PROBLEMS[code];
+  const requestId = randomUUID();
+  if (status === 500) process.stderr.write(`request ${requestId}\n`);
+  response.writeHead(status, {
+    'Content-Type': 'application/problem+json',
+    'X-Content-Type-Options': 'nosniff',
+    'X-Request-Id': requestId,
+    Connection: 'close',
+    ...headers,
   });
-  response.writeHead(status, { 'Content-Type': 'application/problem+json', Connection: 'close', ...headers });
-  response.end(body);
+  response.end(JSON.stringify({ type: `urn:ripplebench:problem:${code}`, title, status, code, detail, requestId }));
 }
 
 /** Watches a request body and answers 408 when it trickles. */
@@ -56,7 +79,7 @@ function watchBody(request, response) {
     if (receivedBytes >= SLOWEST_BODY_BYTES_PER_SECOND * SLOW_BODY_WINDOW_SECONDS) return;
     clearInterval(timer);
     response.once('close', () => request.destroy());
-    sendProblem(response, 408, 'request-timeout', 'The upload was too slow. Try again on a better connection.');
+    sendProblem(response, 'request-timeout');
   }, SLOW_BODY_WINDOW_SECONDS * 1000);
   timer.unref();
   for (const event of ['end', 'close']) request.once(event, () => clearInterval(timer));
@@ -92,9 +115,7 @@ function rememberEventStream(response) {
 
 const server = createServer((request, response) => {
   if (isStopping) {
-    sendProblem(response, 503, 'shutting-down', 'The server is restarting. Try again in a moment.', {
-      'Retry-After': '5',
-    });
+    sendProblem(response, 'shutting-down');
     return;
   }
   if (!trustsProxy) {
@@ -103,7 +124,7 @@ const server = createServer((request, response) => {
     }
   }
   if (request.url?.startsWith('/_image')) {
-    sendProblem(response, 404, 'not-found', 'There is nothing here.');
+    sendProblem(response, 'not-found');
     return;
   }
   if (request.headers['content-length'] !== undefined || request.headers['transfer-encoding'] !== undefined) {
@@ -114,12 +135,7 @@ const server = createServer((request, response) => {
   const render = () => {
     Promise.resolve(handler(request, response, undefined, { nodeResponse: response })).catch((error) => {
       process.stderr.write(`${error?.stack ?? error}\n`);
-      sendProblem(
-        response,
-        500,
-        'internal',
-        'Something went wrong here. Try again; if it stays, tell your bench owner.',
-      );
+      sendProblem(response, 'internal');
     });
   };
   if (request.method === 'GET' || request.method === 'HEAD') serveStatic(request, response, render);

@@ -1,16 +1,9 @@
 import { QueryTypes } from 'sequelize';
 import { SequelizeStorage, Umzug } from 'umzug';
 import { database } from './connection.ts';
+import type { Migration } from './migration.ts';
 import * as firstSchema from './migrations/20261201-0001-first-schema.ts';
 import * as workers from './migrations/20261201-0002-workers.ts';
-
-/** One DDL statement that may be run again: MariaDB commits DDL at once, so a migration killed half-way resumes here. */
-export type MigrationStep = string;
-
-interface Migration {
-  readonly name: string;
-  readonly steps: readonly MigrationStep[];
-}
 
 /** Oldest first. Listed by hand so that the bundle carries them; a test compares the list with the folder. */
 export const MIGRATIONS: readonly Migration[] = [firstSchema, workers];

@@ -1,4 +1,4 @@
-import type { MigrationStep } from '../migrate.ts';
+import type { MigrationStep } from '../migration.ts';
 
 /**
  * Identifiers are UUIDs in ASCII with binary collation; tokens, keys and hashes are binary, because the default

@@ -1,4 +1,4 @@
-import type { MigrationStep } from '../migrate.ts';
+import type { MigrationStep } from '../migration.ts';
 
 export const name = '20261201-0002-workers';
 
