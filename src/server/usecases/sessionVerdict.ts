@@ -1,8 +1,10 @@
 import { UNSURE_BELOW_CONFIDENCE } from '#lib/analysis/reading.ts';
+import { numberText, plainNumberText } from '#lib/format/numberText.ts';
 import { uncertainSentence } from '#lib/format/uncertainText.ts';
 import type { SessionPurpose, SessionResultView } from '#lib/schemas/session.ts';
 import type { Interval } from '#lib/statistics/interval.ts';
 import { lineIntervals } from '#lib/statistics/lineIntervals.ts';
+import { type LineMisfit, lineMisfit } from '#lib/statistics/lineMisfit.ts';
 import { normalSample } from '#lib/statistics/normalSample.ts';
 
 export interface SessionPoint {
@@ -22,6 +24,8 @@ export interface SessionPoint {
 export type Verdict = Pick<SessionResultView, 'sentence' | 'missing' | 'figures'>;
 
 const SWEEP_VOLTAGE_MINIMUM_COUNT = 3;
+/** A speed within this of the true one counts as right; what is so near its line is no misfit. */
+const RIGHT_SPEED_RATIO = 0.01;
 /**
  * Two results of one motor under the same conditions differ by more than this many standard deviations only once in
  * twenty: 1.96 √2. Reference: ISO 5725-6:1994, 4.1.4.
@@ -94,10 +98,15 @@ function sweepVerdict(points: readonly SessionPoint[]): Verdict {
     const wanted = `Recordings at ${String(SWEEP_VOLTAGE_MINIMUM_COUNT)} voltages or more; there are ${String(voltageCount)}.`;
     return { sentence: 'Not enough voltages for a line yet.', missing: [...missing, wanted], figures: {} };
   }
-  const { slope, zeroCrossing } = lineIntervals(
-    volts,
-    powered.map(({ rpm }) => rpm),
-  );
+  const speeds = powered.map(({ rpm }) => rpm);
+  const misfit = lineMisfit({
+    x: volts,
+    y: speeds,
+    allowance: powered.map(({ rpm, rpmLow, rpmHigh }) => Math.max((rpmHigh - rpmLow) / 2, RIGHT_SPEED_RATIO * rpm)),
+  });
+  const outside = powered[misfit?.index ?? -1];
+  if (misfit !== null && outside !== undefined) return misfitVerdict(outside, misfit, missing);
+  const { slope, zeroCrossing } = lineIntervals(volts, speeds);
   return {
     sentence: `Each volt adds ${uncertainSentence(slope, 'rpm')}.`,
     missing:
@@ -106,6 +115,19 @@ function sweepVerdict(points: readonly SessionPoint[]): Verdict {
       speedConstant: { ...slope, unit: 'rpm/V' },
       ...(zeroCrossing && { noLoadOffset: { ...zeroCrossing, unit: 'V' } }),
     },
+  };
+}
+
+/** A line drawn through a wrong speed would be wrong for every voltage, so none is. */
+function misfitVerdict({ supplyVolts, rpm }: SessionPoint, { expected }: LineMisfit, missing: string[]): Verdict {
+  const at = `${plainNumberText(supplyVolts ?? 0)} V`;
+  return {
+    sentence: `The recording at ${at} (${numberText(rpm, 0)} rpm) does not fit the line of the others, which expect ${uncertainSentence(expected, 'rpm')} there.`,
+    missing: [
+      ...missing,
+      `A look at the recording at ${at}: choose its right speed or voltage, or mark it to be recorded again.`,
+    ],
+    figures: {},
   };
 }
 

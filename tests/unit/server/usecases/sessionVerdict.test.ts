@@ -29,7 +29,9 @@ describe('sessionVerdict', () => {
 
   it('gives the interval of the reading itself for one recording, and asks for a second', () => {
     const { figures, sentence, missing } = sessionVerdict('speed-check', [point(3000)]);
-    expect(figures).toEqual({ meanSpeed: { value: 3000, low: 2998, high: 3002, unit: 'rpm' } });
+    expect(figures).toEqual({
+      meanSpeed: { value: 3000, low: 2998, high: 3002, unit: 'rpm' },
+    });
     expect(sentence).toBe('One recording: 3000 rpm, between 2998 and 3002 (95 %).');
     expect(missing).toHaveLength(1);
   });
@@ -64,6 +66,24 @@ describe('sessionVerdict', () => {
     expect(figures.speedConstant).toMatchObject({ value: 1000, unit: 'rpm/V' });
     expect(figures.noLoadOffset?.value).toBeCloseTo(0.25, 12);
     expect(missing).toEqual([]);
+  });
+
+  it.each([2505, 10_030])('claims no line when the speed at 5 V is %i rpm, and names that recording', (wrongRpm) => {
+    const points = [1988, 3007, 3995, 5012, wrongRpm].map((rpm, index) => point(rpm, { supplyVolts: index + 1 }));
+    const { figures, sentence, missing } = sessionVerdict('voltage-sweep', points);
+    expect(figures).toEqual({});
+    expect(sentence).toContain(`The recording at 5 V (${String(wrongRpm)} rpm) does not fit the line of the others`);
+    expect(missing).toEqual([expect.stringContaining('the recording at 5 V')]);
+  });
+
+  it('keeps a line whose points scatter by 0.5 %, and an exact one with a point 0.9 % off', () => {
+    for (const rpms of [
+      [1990, 3015, 3980, 5025, 5990],
+      [2000, 3000, 4036, 5000, 6000],
+    ]) {
+      const points = rpms.map((rpm, index) => point(rpm, { supplyVolts: index + 1 }));
+      expect(sessionVerdict('voltage-sweep', points).figures).toHaveProperty('speedConstant');
+    }
   });
 
   it('gives no offset while the line is not sure to rise', () => {
