@@ -39,12 +39,15 @@ function* filesBelow(path) {
   for (const entry of readdirSync(path).sort()) yield* filesBelow(join(path, entry));
 }
 
-/** @returns {string} a name for the present sources; any changed byte changes it */
-export function sourceHash() {
+/**
+ * @param {string} [projectFolder]
+ * @returns {string} a name for the present sources; any changed byte or moved file changes it
+ */
+export function sourceHash(projectFolder = PROJECT_FOLDER) {
   const hash = createHash('sha256').update(process.version);
   for (const source of SOURCES) {
-    for (const file of filesBelow(join(PROJECT_FOLDER, source))) {
-      hash.update(`\0${relative(PROJECT_FOLDER, file)}\0`).update(readFileSync(file));
+    for (const file of filesBelow(join(projectFolder, source))) {
+      hash.update(`\0${relative(projectFolder, file)}\0`).update(readFileSync(file));
     }
   }
   return hash.digest('hex').slice(0, 16);

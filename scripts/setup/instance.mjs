@@ -19,7 +19,11 @@ function isReachableByAll(folder) {
   }
 }
 
-/** Folder for the servers' own files; beside the data unless other users cannot get there. */
+/**
+ * Folder for the servers' own files; beside the data unless other users cannot get there.
+ * @param {string} dataFolder
+ * @returns {string}
+ */
 function serverFolderFor(dataFolder) {
   if (process.getuid?.() !== 0 || isReachableByAll(dataFolder)) return dataFolder;
   const name = createHash('sha256').update(dataFolder).digest('hex').slice(0, 12);
