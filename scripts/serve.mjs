@@ -34,6 +34,12 @@ const serveStatic = sirv(join(webFolder, 'client'), {
 /** What this server says itself; the codes are those of the catalogue in src/server/errors.ts. */
 const PROBLEMS = {
   'not-found': { status: 404, title: 'Not found', detail: 'There is nothing at this address.' },
+  'method-not-allowed': {
+    status: 405,
+    title: 'Method not allowed',
+    detail: 'No address here answers this method.',
+    headers: { Allow: 'GET, HEAD, POST, PATCH' },
+  },
   'request-timeout': {
     status: 408,
     title: 'The upload was too slow',
@@ -122,6 +128,11 @@ const server = createServer((request, response) => {
     for (const name of ['x-forwarded-for', 'x-forwarded-proto', 'x-forwarded-host', 'x-forwarded-port', 'forwarded']) {
       delete request.headers[name];
     }
+  }
+  // The Fetch standard forbids a Request with this method, so Astro could not even refuse it.
+  if (request.method === 'TRACE') {
+    sendProblem(response, 'method-not-allowed');
+    return;
   }
   if (request.url?.startsWith('/_image')) {
     sendProblem(response, 'not-found');

@@ -14,8 +14,9 @@ export function problemOf(
   requestId: string,
 ): { problem: ProblemBody; retryAfterSeconds: number | null } {
   const expected = asServerError(error);
-  const { status, title } = ERROR_CATALOGUE[expected.code];
-  const isUnavailable = status === 503;
+  const entry = ERROR_CATALOGUE[expected.code];
+  const { status, title } = entry;
+  const isBackSoon = status === 503 && 'isRetryable' in entry;
   return {
     problem: {
       type: `urn:ripplebench:problem:${expected.code}`,
@@ -28,7 +29,7 @@ export function problemOf(
         errors: [...expected.fieldErrors],
       }),
     },
-    retryAfterSeconds: expected.retryAfterSeconds ?? (isUnavailable ? RETRY_AFTER_SECONDS : null),
+    retryAfterSeconds: expected.retryAfterSeconds ?? (isBackSoon ? RETRY_AFTER_SECONDS : null),
   };
 }
 

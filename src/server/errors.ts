@@ -43,8 +43,8 @@ export const ERROR_CATALOGUE = {
   truncated: { status: 422, title: 'The recording was not finished' },
   'not-finite': { status: 422, title: 'The recording contains invalid samples' },
   'out-of-range': { status: 422, title: 'The recording contains impossible levels' },
-  'file-missing': { status: 500, title: 'The stored file is missing', isReported: true },
-  'worker-lost': { status: 500, title: 'The analysis was interrupted too often', isReported: true },
+  'file-missing': { status: 503, title: 'The stored file is missing', isReported: true },
+  'worker-lost': { status: 503, title: 'The analysis was interrupted too often', isReported: true },
   // The server
   'storage-full': { status: 507, title: 'There is no room for more recordings', isReported: true, isRetryable: true },
   'storage-unavailable': { status: 503, title: 'Storage is not available', isReported: true, isRetryable: true },

@@ -1,9 +1,19 @@
+import { once } from 'node:events';
+import { type IncomingMessage, request } from 'node:http';
 import { describe, expect, it } from 'vitest';
 import { createBenchWithAccounts } from '#tests/factories/account.ts';
-import { apiClient } from '#tests/support/apiClient.ts';
+import { apiClient, baseUrl } from '#tests/support/apiClient.ts';
 import { expectProblem } from '#tests/support/expectProblem.ts';
 
 const anonymous = apiClient();
+
+/** `fetch` refuses to send it. */
+async function statusOfTrace(path: string): Promise<[number | undefined, string | undefined]> {
+  const call = request(new URL(path, baseUrl()), { method: 'TRACE' }).end();
+  const [answer] = (await once(call, 'response')) as [IncomingMessage];
+  answer.resume();
+  return [answer.statusCode, answer.headers['content-type']];
+}
 
 describe('every answer', () => {
   it.each(['/healthz', '/api/v1/me', '/api/v1/nothing', '/sign-in', '/no-such-page'])(
@@ -44,6 +54,12 @@ describe('an address or method that does not exist', () => {
     expectProblem(answer, 'method-not-allowed');
     expect(answer.headers.get('allow')).toBe('GET');
     expectProblem(await anonymous.send('/builds', { method: 'POST' }), 'method-not-allowed');
+  });
+
+  it('answers 405 to TRACE, which no Request can carry, also where there is nothing', async () => {
+    for (const path of ['/', '/api/v1/recordings', '/api/v1/nothing']) {
+      expect(await statusOfTrace(path)).toEqual([405, 'application/problem+json']);
+    }
   });
 
   it('answers HEAD like GET, without a body', async () => {

@@ -56,6 +56,12 @@ describe('problemOf', () => {
     expect(problemOf(error, REQUEST_ID).problem.code).toBe('internal');
   });
 
+  it.each(['file-missing', 'worker-lost'] as const)('answers 503 to %s, without the hope of a retry', (code) => {
+    const { problem, retryAfterSeconds } = problemOf(new ServerError({ code, detail: 'Gone.' }), REQUEST_ID);
+    expect(problem).toMatchObject({ status: 503, code });
+    expect(retryAfterSeconds).toBeNull();
+  });
+
   it('hands the time to wait on', () => {
     const error = new ServerError({ code: 'too-many-requests', detail: 'Later.', retryAfterSeconds: 1.2 });
     expect(problemOf(error, REQUEST_ID).retryAfterSeconds).toBe(1.2);
