@@ -41,7 +41,7 @@ export function measureChannel(samples: Float32Array): ChannelLevel {
     if (Math.abs(value) > peak) peak = Math.abs(value);
   }
   if (!Number.isFinite(energy))
-    throw new AnalysisRefused('not-finite', 'The sound holds samples that are not numbers.');
+    throw new AnalysisRefused('not-finite', 'The recording contains invalid samples: some of them are not numbers.');
   if (peak > LARGEST_SAMPLE) {
     throw new AnalysisRefused('out-of-range', `The sound holds a sample of ${peak.toPrecision(3)} times full scale.`);
   }

@@ -10,6 +10,7 @@ import {
 export type MediaRefusalCode =
   | 'empty-file'
   | 'not-audio'
+  | 'unsupported-media-type'
   | 'no-audio'
   | 'bad-header'
   | 'unsupported-rate'
@@ -71,10 +72,11 @@ export function tooShortMessage(durationSeconds: number): string {
   return `Too short: ${seconds} s; at least ${MINIMUM_DURATION_SECONDS} s needed. Record for longer and upload again.`;
 }
 
-/** "Too long: 4 h 0 min; limit 10 min. …"; null when the length is not known. */
+/** "Too long: 4 h 0 min; limit 10 min. …"; null when the sound goes on past the limit and its length is not known. */
 export function tooLongMessage(durationSeconds: number | null): string {
-  const length = durationSeconds === null ? 'more than the limit' : spokenDuration(durationSeconds);
-  return `Too long: ${length}; limit ${MAXIMUM_DURATION_SECONDS / 60} min. Cut out the part to measure and upload that.`;
+  const limitMinutes = MAXIMUM_DURATION_SECONDS / 60;
+  const length = durationSeconds === null ? `more than ${limitMinutes} min` : spokenDuration(durationSeconds);
+  return `Too long: ${length}; limit ${limitMinutes} min. Cut out the part to measure and upload that.`;
 }
 
 /** States the allowed range beside the rate that was found. */

@@ -14,7 +14,7 @@ import type { MediaProbe, StreamProbe, UnfinishedProbe, WavProbe } from './media
 import { hasSoundBeyondLimit, ProbeTimedOut, readStreams, type ProbeScope } from './readStreams.ts';
 import { readWavHeader, type WavDescription } from './readWavHeader.ts';
 import { selectAudioStream } from './selectAudioStream.ts';
-import { sniffContainer, type MediaContainer } from './sniffContainer.ts';
+import { isZipArchive, sniffContainer, type MediaContainer } from './sniffContainer.ts';
 
 export interface ProbeOptions {
   /** Longest examination by ffprobe, seconds of wall time, not counting the wait for a free place. */
@@ -40,7 +40,7 @@ export async function probeMedia(path: string, options: ProbeOptions = {}): Prom
     const { size: fileBytes } = await file.stat();
     if (fileBytes === 0) throw new MediaRefused('empty-file', 'The file is empty (0 bytes). Record or copy it again.');
     const container = await sniffContainer(file);
-    if (container === null) throw notAudio();
+    if (container === null) throw (await isZipArchive(file)) ? archive() : notAudio();
     if (container === 'wav') return await probeWav(file, fileBytes);
     if (container === 'mp4' && (await isUnfinishedMp4(file, fileBytes))) return UNFINISHED_PROBE;
     return await probeGate(() => probeStreams(file, path, container, options));
@@ -153,5 +153,12 @@ function notAudio(): MediaRefused {
   return new MediaRefused(
     'not-audio',
     'The file is not a sound or video recording that can be read. Upload the original.',
+  );
+}
+
+function archive(): MediaRefused {
+  return new MediaRefused(
+    'unsupported-media-type',
+    'The file is a ZIP archive, which is not unpacked here. Unpack it and upload the recordings in it.',
   );
 }

@@ -24,6 +24,12 @@ export async function sniffContainer(file: FileHandle): Promise<MediaContainer |
   return afterTag === 'aac' || afterTag === 'flac' ? afterTag : 'mp3';
 }
 
+/** Whether the file is a ZIP archive, full or empty (PKWARE APPNOTE, 4.3.7 and 4.3.16). */
+export async function isZipArchive(file: FileHandle): Promise<boolean> {
+  const magic = (await readAt(file, 4, 0)).toString('latin1');
+  return magic === 'PK\x03\x04' || magic === 'PK\x05\x06';
+}
+
 function containerOf(head: Buffer): MediaContainer | null {
   const id = head.toString('latin1', 0, 4);
   const kind = head.toString('latin1', 8, 12);

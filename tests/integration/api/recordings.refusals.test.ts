@@ -87,6 +87,12 @@ describe('POST /api/v1/recordings, files that are none', () => {
     ['of 0 samples', wavFile({ durationSeconds: 0 }), 'too-short', /0\.0 s; at least 0\.5 s needed/],
     ['of 0.2 s', wavFile({ durationSeconds: 0.2 }), 'too-short', /0\.2 s; at least 0\.5 s needed/],
     ['of HTML', html, 'not-audio', /not a sound or video recording/],
+    [
+      'that is an empty ZIP',
+      Buffer.from('PK\x05\x06'.padEnd(22, '\0'), 'latin1'),
+      'unsupported-media-type',
+      /ZIP archive/,
+    ],
     ['that lists other files', playlist, 'not-audio', /not a sound or video recording/],
   ];
 

@@ -7,7 +7,7 @@ describe('tooLongMessage', () => {
     [3600, '1 h 0 min'],
     [3599, '59 min 59 s'],
     [600.01, '10 min 1 s'],
-    [null, 'more than the limit'],
+    [null, 'more than 10 min'],
   ])('says %s s as "%s; limit 10 min"', (durationSeconds, length) => {
     expect(tooLongMessage(durationSeconds)).toContain(`Too long: ${length}; limit 10 min.`);
   });

@@ -117,12 +117,22 @@ describe('probeMedia on files that pretend to be recordings', () => {
     ['an SVG', '<svg xmlns="http://www.w3.org/2000/svg" onload="alert(1)"/>'],
     ['an HTML page', '<!doctype html><script>alert(1)</script>'],
     ['a PNG', hugePng(16)],
-    ['a ZIP', Buffer.concat([Buffer.from('PK\x03\x04', 'latin1'), Buffer.alloc(1000)])],
     ['an AVI', Buffer.from('RIFF\x24\0\0\0AVI LIST', 'latin1')],
     ['one byte', Buffer.from('R')],
   ])('refuses %s as not-audio', async (_kind, bytes) => {
     const path = await folder.write('disguise.mp4', bytes);
     await expect(probeMedia(path)).rejects.toMatchObject({ code: 'not-audio' });
+  });
+
+  it.each([
+    ['a ZIP', 'PK\x03\x04'],
+    ['an empty ZIP', 'PK\x05\x06'],
+  ])('says that %s is to be unpacked first', async (_kind, magic) => {
+    const path = await folder.write('evening.wav', Buffer.concat([Buffer.from(magic, 'latin1'), Buffer.alloc(1000)]));
+    await expect(probeMedia(path)).rejects.toMatchObject({
+      code: 'unsupported-media-type',
+      message: expect.stringContaining('ZIP archive') as string,
+    });
   });
 
   it('accepts a WAV with a script behind it and hears only the sound', async () => {
