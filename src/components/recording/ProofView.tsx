@@ -6,6 +6,7 @@ import type { ReadingView, SeriesView } from '#lib/schemas/reading.ts';
 import { eventHertzFromRpm } from '#lib/units/rotation.ts';
 import { proofReasons } from './proofReasons.ts';
 import { RackSpeed } from './RackSpeed.tsx';
+import { isHalfPossible } from './rivals.ts';
 import { fullColumn, gapColumn } from './seriesColumns.ts';
 import { showSpeed } from './shownSpeed.ts';
 
@@ -35,10 +36,18 @@ export function ProofView({ series, viewName, reading, rpm, answerRpm, isMoved, 
       ? (reading.eventsPerTurn * shaftRpm) / (reading.rpm ?? shaftRpm)
       : eventHertzFromRpm(shaftRpm, reading.eventsPerTurn);
   const spacing = rpm === null ? null : spacingAt(rpm);
-  const reasons = spacing === null ? [] : proofReasons(positions, levels, { spacing, unit });
+  const reasons =
+    rpm === null || spacing === null
+      ? []
+      : proofReasons(positions, levels, {
+          spacing,
+          unit,
+          eventsPerTurn: reading.eventsPerTurn,
+          isHalfPossible: isHalfPossible(reading, rpm),
+        });
   return (
     <div className="columns-12">
-      <div className="min-w-0 bg-sheet py-3 pr-1 pl-3 desk:col-span-8">
+      <div className="min-w-0 bg-sheet p-3 desk:col-span-8">
         <SpectrumChart
           title={`${viewName === 'spectrum' ? 'Spectrum' : `${viewName} spectrum`} of ${fileName}`}
           fileName={`${fileName} ${viewName}`}

@@ -63,7 +63,7 @@ function WhyNot({ reading, chosenRpm }: { reading: ReadingView; chosenRpm: numbe
     return <p className="max-w-sentence">This is what it would be if something did turn.</p>;
   }
   return (
-    <p className="max-w-sentence">
+    <p className="mt-2 max-w-sentence">
       <GroupedText text={whyNotTexts(reading, chosenRpm).join(' ')} />
     </p>
   );

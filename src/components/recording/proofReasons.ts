@@ -7,6 +7,16 @@ export interface ProofReason {
   readonly teeth: readonly number[];
 }
 
+/** The rack over one spectrum, and what the ranking says about half its speed. */
+interface Rack {
+  /** Event rate in the unit of the positions. */
+  readonly spacing: number;
+  /** As people write it: "Hz", "orders". */
+  readonly unit: string;
+  readonly eventsPerTurn: number;
+  readonly isHalfPossible: boolean;
+}
+
 /** The reasons speak of the first teeth: further up every motor fades. */
 const FIRST_TEETH = 8;
 
@@ -15,14 +25,13 @@ const FIRST_TEETH = 8;
  *
  * @param positions ascending, shape [rowCount]
  * @param levels dB above the floor, shape [rowCount]
- * @param spacing event rate in the unit of `positions`
- * @param unit as people write it: "Hz", "orders"
  */
 export function proofReasons(
   positions: readonly number[],
   levels: readonly (number | null)[],
-  { spacing, unit }: { spacing: number; unit: string },
+  rack: Rack,
 ): ProofReason[] {
+  const { spacing, unit } = rack;
   const teeth = teethOver(positions, levels, spacing).slice(0, FIRST_TEETH);
   if (teeth.length === 0) return [{ text: 'The first tooth lies beyond this spectrum.', teeth: [] }];
   const found = teeth.filter((tooth) => tooth.isFound);
@@ -36,9 +45,12 @@ export function proofReasons(
   const strongest = strongestOf(found);
   if (strongest !== null) reasons.push(strongestReason(strongest, unit));
   if (found.length > 0 && missing.length > 0) {
-    reasons.push({ text: `No line at ${listText(multiplesOf(missing))}.`, teeth: multiplesOf(missing) });
+    reasons.push({
+      text: `No line at ${listText(multiplesOf(missing))}.`,
+      teeth: multiplesOf(missing),
+    });
   }
-  return [...reasons, betweenReason(positions, levels, spacing)];
+  return [...reasons, betweenReason(positions, levels, rack)];
 }
 
 function strongestReason(tooth: Tooth, unit: string): ProofReason {
@@ -50,20 +62,26 @@ function strongestReason(tooth: Tooth, unit: string): ProofReason {
   };
 }
 
-/** Half the speed would need lines in the middle between the teeth. */
-function betweenReason(positions: readonly number[], levels: readonly (number | null)[], spacing: number): ProofReason {
-  const between = teethOver(positions, levels, spacing / 2)
+/** Half the speed would need lines in the middle between the teeth; finding them does not yet speak for it. */
+function betweenReason(positions: readonly number[], levels: readonly (number | null)[], rack: Rack): ProofReason {
+  const between = teethOver(positions, levels, rack.spacing / 2)
     .slice(0, 2 * FIRST_TEETH)
     .filter(({ multiple }) => multiple % 2 === 1);
   const count = between.filter((tooth) => tooth.isFound).length;
   const places = `${String(count)} of ${String(between.length)} places`;
+  const meaning = count * 2 > between.length ? meaningOfLinesBetween(rack) : '.';
   return {
-    text:
-      count * 2 > between.length
-        ? `Between the teeth, where half the speed would need lines, ${places} have one: half stays possible.`
-        : `Between the teeth, where half the speed would need lines, ${places} have one.`,
+    text: `Between the teeth, where half the speed would need lines, ${places} have one${meaning}`,
     teeth: [],
   };
+}
+
+function meaningOfLinesBetween({ eventsPerTurn, isHalfPossible }: Rack): string {
+  if (isHalfPossible) return ': half stays possible.';
+  // With an even count the middle between two teeth is a whole multiple of the turning rate.
+  return eventsPerTurn % 2 === 0
+    ? '. Events that differ within a turn put lines there too, and half explains the other lines less well.'
+    : ', yet half explains the other lines less well.';
 }
 
 function strongestOf(teeth: readonly Tooth[]): Tooth | null {

@@ -6,7 +6,8 @@ type Relation = 'half' | 'double';
 
 /** Two speeds are the same candidate within this fraction. */
 const SAME_FRACTION = 0.01;
-const CLEARLY_WEAKER_SCORE = 0.8;
+/** A rival below this fraction of the chosen weight is no equal of it. */
+const CLEARLY_WEAKER_FRACTION = 0.8;
 /** Below this a candidate is no rival. */
 export const NEGLIGIBLE_SCORE = 0.01;
 
@@ -36,6 +37,17 @@ export function whyNotTexts({ candidates, settings }: ReadingView, chosenRpm: nu
   });
 }
 
+/** Whether half the chosen speed weighs about as much as the speed itself, so that the sound alone does not decide. */
+export function isHalfPossible({ candidates }: ReadingView, chosenRpm: number): boolean {
+  const chosen = candidates.find(({ rpm }) => isSameSpeed(rpm, chosenRpm));
+  const half = candidates.find(({ rpm }) => isSameSpeed(rpm, chosenRpm / 2));
+  return half !== undefined && half.score >= NEGLIGIBLE_SCORE && !isClearlyWeaker(half, chosen);
+}
+
+function isClearlyWeaker(rival: Candidate, chosen: Candidate | undefined): boolean {
+  return chosen !== undefined && rival.score < chosen.score * CLEARLY_WEAKER_FRACTION;
+}
+
 function weightText(rival: Candidate | undefined, chosen: Candidate | undefined): string {
   if (rival === undefined) return ' explains too few lines to be a candidate.';
   const why = ownReason(rival.reason);
@@ -43,7 +55,7 @@ function weightText(rival: Candidate | undefined, chosen: Candidate | undefined)
   if (chosen === undefined) return ` has a weight of ${scoreText(rival.score)}: ${why}`;
   const weights = `${scoreText(rival.score)} against ${scoreText(chosen.score)}`;
   if (rival.score > chosen.score) return ` weighs more, ${weights}: ${why}`;
-  if (rival.score < chosen.score * CLEARLY_WEAKER_SCORE) return ` weighs ${weights}: ${why}`;
+  if (isClearlyWeaker(rival, chosen)) return ` weighs ${weights}: ${why}`;
   return ` stays possible, ${weights}: ${why}`;
 }
 

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { relationOf, whyNotTexts } from '#components/recording/rivals.ts';
+import { isHalfPossible, relationOf, whyNotTexts } from '#components/recording/rivals.ts';
 import { readingView } from '#tests/factories/recordingView.ts';
 
 describe('relationOf', () => {
@@ -45,7 +45,11 @@ describe('whyNotTexts', () => {
   it('calls a half with a score of 3e-7 as good as ruled out, in its own reason', () => {
     const candidates = [
       { rpm: 2874, score: 0.99, reason: 'A.' },
-      { rpm: 1437, score: 3e-7, reason: 'Half the best speed: only some of its events would sound.' },
+      {
+        rpm: 1437,
+        score: 3e-7,
+        reason: 'Half the best speed: only some of its events would sound.',
+      },
     ];
     expect(whyNotTexts(readingView({ candidates }), 2874)[0]).toBe(
       'Half (1437 rpm) is as good as ruled out: only some of its events would sound.',
@@ -56,5 +60,24 @@ describe('whyNotTexts', () => {
     const { settings } = readingView();
     const reading = readingView({ settings: { ...settings, rpmMin: 2000 } });
     expect(whyNotTexts(reading, 2874)[0]).toBe('Half (1437 rpm) lies outside the allowed range.');
+  });
+});
+
+describe('isHalfPossible', () => {
+  it.each([
+    [0.48, true],
+    [0.6, true],
+    [0.3, false],
+    [0.001, false],
+  ])('of a half with a score of %f against 0.5 is %s', (score, isPossible) => {
+    const candidates = [
+      { rpm: 2874, score: 0.5, reason: '' },
+      { rpm: 1437, score, reason: '' },
+    ];
+    expect(isHalfPossible(readingView({ candidates }), 2874)).toBe(isPossible);
+  });
+
+  it('is false when half is no candidate', () => {
+    expect(isHalfPossible(readingView({ candidates: [{ rpm: 2874, score: 0.9, reason: '' }] }), 2874)).toBe(false);
   });
 });
