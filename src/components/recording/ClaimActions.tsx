@@ -2,10 +2,12 @@ import { useState } from 'react';
 import { ApiError } from '#client/api/ApiError.ts';
 import { Button } from '#components/ui/Button.tsx';
 import { ButtonLink } from '#components/ui/ButtonLink.tsx';
+import { GroupedText } from '#components/ui/GroupedText.tsx';
 import { Notice } from '#components/ui/Notice.tsx';
 import type { ReviewRequest } from '#lib/schemas/reading.ts';
 import type { RecordingView } from '#lib/schemas/recording.ts';
 import { ChooseAnother } from './ChooseAnother.tsx';
+import { confirmationOf, confirmWords } from './confirmation.ts';
 import { ReviewLine } from './ReviewLine.tsx';
 import { recordAgainHref, useReview } from './useReview.ts';
 
@@ -31,7 +33,7 @@ export function ClaimActions({ recording }: Props) {
       {review !== null && <ReviewLine review={review} />}
       {canReview && !isChoosing && (
         <>
-          {review?.decision !== 'confirm' && (
+          {review?.decision !== confirmationOf(recording).decision && (
             <Button
               weight="main"
               isBusy={isPending}
@@ -40,7 +42,7 @@ export function ClaimActions({ recording }: Props) {
                 say(confirmationOf(recording));
               }}
             >
-              Confirm
+              <GroupedText text={confirmWords(recording)} />
             </Button>
           )}
           <Button
@@ -75,11 +77,12 @@ export function ClaimActions({ recording }: Props) {
           }}
         />
       )}
-      {(review?.decision === 'record-again' || recording.status === 'failed') && (
-        <ButtonLink href={recordAgainHref(recording)}>
-          {recording.status === 'failed' ? 'Record again' : 'Add the new recording'}
-        </ButtonLink>
-      )}
+      {(abilities.canEdit || abilities.canReview) &&
+        (review?.decision === 'record-again' || recording.status === 'failed') && (
+          <ButtonLink href={recordAgainHref(recording)}>
+            {recording.status === 'failed' ? 'Record again' : 'Add the new recording'}
+          </ButtonLink>
+        )}
       {error !== null && (
         <Notice shape="outside" title="Not saved">
           {error instanceof ApiError ? error.detail : 'Try again in a moment.'}
@@ -87,9 +90,4 @@ export function ClaimActions({ recording }: Props) {
       )}
     </div>
   );
-}
-
-/** Confirming says what the machine said: its speed, or that nothing turned. */
-export function confirmationOf({ reading }: RecordingView): ReviewRequest {
-  return { decision: reading?.status === 'no-rotation' ? 'nothing-turning' : 'confirm', reason: '' };
 }

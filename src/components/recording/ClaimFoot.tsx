@@ -2,8 +2,9 @@ import type { ReactNode } from 'react';
 import { ClientProvider } from '#client/ClientProvider.tsx';
 import { Button } from '#components/ui/Button.tsx';
 import { buttonClasses } from '#components/ui/buttonStyle.ts';
+import { GroupedText } from '#components/ui/GroupedText.tsx';
 import type { RecordingView } from '#lib/schemas/recording.ts';
-import { confirmationOf } from './ClaimActions.tsx';
+import { confirmationOf, confirmWords } from './confirmation.ts';
 import { recordAgainHref, useReview } from './useReview.ts';
 import { useRecording } from './useRecording.ts';
 
@@ -37,7 +38,7 @@ function LiveFoot({ initial, otherwise }: { initial: RecordingView; otherwise: R
           mutate(confirmationOf(recording));
         }}
       >
-        Confirm
+        <GroupedText text={confirmWords(recording)} />
       </Button>
       <a
         className={buttonClasses('plain', 'min-h-14')}
