@@ -36,7 +36,7 @@ function FigureRow({ name, figure }: { name: string; figure: SessionFigure }) {
   return (
     <div className="flex flex-wrap items-baseline justify-between gap-x-6 border-t border-line py-2">
       <dt>{name}</dt>
-      <dd className="text-right">
+      <dd className="ml-auto text-right">
         <span className="figures">
           <GroupedText text={value} />
         </span>{' '}

@@ -55,8 +55,8 @@ function RecordingRow({ row, axis, isNewest }: { row: SessionRow; axis: SpeedAxi
         <a href={`/recordings/${recordingId}`} className="flex items-center touch">
           <span className="truncate">{circumstances || fileName}</span>
         </a>
-        <span className="block truncate text-small text-muted">
-          {circumstances !== '' && <>{fileName} · </>}
+        <span className="flex flex-wrap gap-x-3 text-small text-muted">
+          {circumstances !== '' && <span className="truncate">{fileName}</span>}
           <LocalTime moment={recordedAt} />
         </span>
       </span>
@@ -86,5 +86,9 @@ function RecordingRow({ row, axis, isNewest }: { row: SessionRow; axis: SpeedAxi
 }
 
 function speedText(speed: NonNullable<SessionRow['speed']>): string {
-  return uncertainText({ value: speed.rpm, low: speed.rpmLow, high: speed.rpmHigh }).value;
+  return uncertainText({
+    value: speed.rpm,
+    low: speed.rpmLow,
+    high: speed.rpmHigh,
+  }).value;
 }

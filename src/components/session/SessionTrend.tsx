@@ -31,7 +31,7 @@ export function SessionTrend({ points, axis, by, onBy, newestId }: Props) {
           Each measured recording becomes a dot here, with its 95 % interval. Two recordings already show a trend.
         </p>
       ) : (
-        <div className="bg-sheet py-3 pr-1 pl-3">
+        <div className="bg-sheet p-3">
           <SessionTrendChart
             title="Speed over the recordings"
             points={points}

@@ -33,14 +33,22 @@ export function placedPoints(points: readonly TrendPoint[], by: TrendBy): Placed
     .toSorted((a, b) => a.place - b.place);
 }
 
-/** Columns as uPlot takes them, with an empty row on both sides so that no dot sits on the edge. */
+/** A speed that does not count yet: unsure, and nobody has looked at it. */
+function isHollow({ confidence, reviewed }: TrendPoint): boolean {
+  return isUnsureConfidence(confidence) && !reviewed;
+}
+
+/**
+ * Columns of the line that joins the speeds that count, with an empty row on both sides so that no dot sits on the
+ * edge. A hollow dot has its row, but the line passes it by.
+ */
 export function trendColumns(placed: readonly PlacedPoint[]): uPlot.AlignedData {
   const first = placed[0]?.place ?? 0;
   const last = placed.at(-1)?.place ?? 1;
   const room = last > first ? (last - first) * SIDE_ROOM_FRACTION : 1;
   return [
     [first - room, ...placed.map(({ place }) => place), last + room],
-    [null, ...placed.map(({ point }) => point.rpm), null],
+    [null, ...placed.map(({ point }) => (isHollow(point) ? null : point.rpm)), null],
   ];
 }
 
@@ -57,22 +65,46 @@ export function trendPlotOptions(
     return {
       ...base,
       axes: [
-        { ...xAxis, ...(by === 'order' && { incrs: WHOLE_STEPS }) },
+        {
+          ...xAxis,
+          ...(by === 'order' && {
+            incrs: WHOLE_STEPS,
+            values: orderTexts(placed.length),
+          }),
+        },
         { ...yAxis, splits: () => [...axis.ticksRpm] },
       ],
       scales: { y: { range: [axis.minimumRpm, axis.maximumRpm] } },
-      series: [{}, { stroke: colours.muted, width: 1, points: { show: false } }],
+      series: [
+        {},
+        {
+          stroke: colours.muted,
+          width: 1,
+          points: { show: false },
+          spanGaps: true,
+        },
+      ],
       hooks: {
         draw: [
           (plot) => {
             for (const { point, place } of placed) {
-              drawPoint(plot, { point, place, colours, isNewest: point.recordingId === newestId });
+              drawPoint(plot, {
+                point,
+                place,
+                colours,
+                isNewest: point.recordingId === newestId,
+              });
             }
           },
         ],
       },
     };
   };
+}
+
+/** The free room on both sides has no recording to number. */
+function orderTexts(count: number): uPlot.Axis.DynamicValues {
+  return (_, places) => places.map((place) => (place >= 1 && place <= count ? String(place) : ''));
 }
 
 const WHOLE_STEPS = [1, 2, 5, 10, 20, 50, 100, 200, 500, 1000];
@@ -106,7 +138,7 @@ function drawPoint(plot: uPlot, { point, place, colours, isNewest }: DrawnPoint)
   ctx.stroke();
   ctx.beginPath();
   ctx.arc(x, y, (isNewest ? NEWEST_RADIUS_PX : DOT_RADIUS_PX) * scale, 0, 2 * Math.PI);
-  if (isUnsureConfidence(point.confidence) && !point.reviewed) ctx.fillStyle = colours.sheet;
+  if (isHollow(point)) ctx.fillStyle = colours.sheet;
   ctx.fill();
   ctx.stroke();
   ctx.restore();

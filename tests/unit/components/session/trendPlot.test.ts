@@ -37,4 +37,12 @@ describe('trendColumns', () => {
   it('gives a single recording a stretch to stand on', () => {
     expect(trendColumns(placedPoints([point('a', 2310, 7.5)], 'order'))[0]).toEqual([0, 1, 2]);
   });
+
+  it('leaves a speed of confidence 0.42 out of the line until a person has looked at it', () => {
+    const unsure = { ...point('b', 5000, 5), confidence: 0.42 };
+    const line = (middle: TrendPoint) =>
+      trendColumns(placedPoints([point('a', 870, 3), middle, point('c', 2310, 7.5)], 'order'))[1];
+    expect(line(unsure)).toEqual([null, 870, null, 2310, null]);
+    expect(line({ ...unsure, reviewed: true })).toEqual([null, 870, 5000, 2310, null]);
+  });
 });
