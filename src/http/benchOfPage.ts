@@ -1,5 +1,6 @@
 import type { AstroGlobal } from 'astro';
 import { notFound } from '#server/errors.ts';
+import { canInBench } from '#server/policies/abilities.ts';
 import type { Membership } from '#server/policies/actor.ts';
 import { requireActor } from './requireActor.ts';
 
@@ -20,4 +21,9 @@ export function benchOfPage(context: Pick<AstroGlobal, 'locals' | 'url'>): Membe
 export function benchNameOf(context: Pick<AstroGlobal, 'locals'>, benchId: string): string {
   const { memberships } = requireActor(context);
   return memberships.find((membership) => membership.benchId === benchId)?.benchName ?? 'Bench';
+}
+
+/** Whether the reader may add builds, sessions and recordings to the bench that the page shows. */
+export function canContribute(context: Pick<AstroGlobal, 'locals' | 'url'>): boolean {
+  return canInBench(requireActor(context), benchOfPage(context).benchId, 'contribute');
 }
