@@ -4,7 +4,7 @@ import type { ChartColours } from './chartColours.ts';
 
 /** Room left and right of the plotted area, px; the rack and the unrolled ring keep the same, so that all align. */
 export const PLOT_LEFT_PX = 52;
-export const PLOT_RIGHT_PX = 12;
+export const PLOT_RIGHT_PX = 16;
 const PLOT_TOP_PX = 10;
 const X_AXIS_HEIGHT_PX = 32;
 const FONT = '14px "Atkinson Hyperlegible", "Ripplebench Symbols", sans-serif';

@@ -74,7 +74,7 @@ function Blanks({ recording }: Props) {
           });
       }}
     >
-      <div className="flex max-w-sentence flex-wrap items-center gap-x-2 gap-y-3">
+      <div className="flex flex-wrap items-center gap-x-2 gap-y-3">
         <span>The motor is</span>
         <ChoiceBlank label="Build" noneName="not a build here" choices={choices} {...blank('buildId')} />
         <span>at</span>

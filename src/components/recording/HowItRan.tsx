@@ -74,7 +74,7 @@ function Trend({
     highRpm: gapColumn(series, 'highRpm'),
   }));
   return (
-    <div className="bg-sheet py-3 pr-1 pl-3">
+    <div className="bg-sheet p-3">
       <TrendChart
         title={`Shaft speed over time of ${fileName}`}
         fileName={`${fileName} trend`}

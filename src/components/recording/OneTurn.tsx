@@ -48,7 +48,7 @@ function Turn({ series, reading, fileName }: { series: SeriesView; reading: Read
   const result = evenness(level, reading.eventsPerTurn);
   return (
     <div className="columns-12">
-      <div className="min-w-0 bg-sheet py-3 pr-1 pl-3 desk:col-span-8">
+      <div className="min-w-0 bg-sheet p-3 desk:col-span-8">
         <OneTurnChart
           title={`One turn of ${fileName}`}
           fileName={`${fileName} one turn`}

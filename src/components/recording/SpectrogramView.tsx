@@ -32,7 +32,7 @@ export function SpectrogramView({ series, reading, fileName }: Props) {
     [columns, trend, reading.eventsPerTurn],
   );
   return (
-    <div className="bg-sheet py-3 pr-1 pl-3">
+    <div className="bg-sheet p-3">
       <SpectrogramChart
         title={`Spectrogram of ${fileName}`}
         fileName={`${fileName} event rate`}

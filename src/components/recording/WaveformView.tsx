@@ -20,7 +20,7 @@ export function WaveformView({ series, fileName, onHearFrom }: Props) {
     [series],
   );
   return (
-    <div className="bg-sheet py-3 pr-1 pl-3">
+    <div className="bg-sheet p-3">
       <WaveformChart
         title={`Level over time of ${fileName}`}
         fileName={`${fileName} level`}
