@@ -1,6 +1,7 @@
 import type { Browser } from 'playwright-core';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
-import { DEMO_PASSWORD, launchBrowser, openVisit, signIn } from '../support/browser.ts';
+import { DEMO_PASSWORD } from '#scripts/demo/demoAccounts.ts';
+import { launchBrowser, openVisit, signIn } from '../support/browser.ts';
 
 describe('signing in and out', () => {
   let browser: Browser;

@@ -1,4 +1,5 @@
 import { type Browser, type BrowserContext, chromium, type ConsoleMessage, type Page } from 'playwright-core';
+import { DEMO_PASSWORD } from '#scripts/demo/demoAccounts.ts';
 
 /** Debian's Chromium, without its own network habits: everything it may reach is the application under test. */
 const CHROMIUM = '/usr/bin/chromium';
@@ -24,7 +25,11 @@ export function baseUrl(): string {
 }
 
 export function launchBrowser(): Promise<Browser> {
-  return chromium.launch({ executablePath: CHROMIUM, chromiumSandbox: false, args: CHROMIUM_ARGUMENTS });
+  return chromium.launch({
+    executablePath: CHROMIUM,
+    chromiumSandbox: false,
+    args: CHROMIUM_ARGUMENTS,
+  });
 }
 
 export interface Visit {
@@ -55,8 +60,6 @@ export async function openVisit(
   });
   return { context, page, complaints };
 }
-
-export const DEMO_PASSWORD = 'ripple-at-the-bench-2026';
 
 export async function signIn(page: Page, email = 'owner@ripplebench.example'): Promise<void> {
   await page.goto('/sign-in');
