@@ -3,6 +3,7 @@ import { createInstance } from './setup/instance.mjs';
 import { ensurePackages } from './setup/packages.mjs';
 import { ensurePrograms, SERVER_PROGRAMS } from './setup/programs.mjs';
 import { progress, runCommand, SetupError } from './setup/progress.mjs';
+import { supervise } from './setup/supervise.mjs';
 
 /** `npm start`: from a machine with Node and npm only to a running Ripplebench, and back to nothing on Ctrl-C. */
 const LOOPBACK_HOSTS = ['127.0.0.1', '::1', 'localhost'];
@@ -16,7 +17,6 @@ function refuseDemoInPublic({ demo, host }) {
 }
 
 await runCommand(async () => {
-  let stopping;
   let askToStop = () => {};
   const askedToStop = new Promise((resolve) => {
     askToStop = resolve;
@@ -30,10 +30,9 @@ await runCommand(async () => {
   const application = await startApplication(instance);
   process.stdout.write(`Ripplebench is ready at ${application.url}\n`);
 
-  const reason = await Promise.race([askedToStop, application.firstEnd.then((name) => `${name} ended`)]);
-  progress(`stopping (${reason})`);
-  stopping ??= application.stop();
-  await stopping;
+  const leaves = application.processes.map((running) => supervise(running));
+  progress(`stopping (${await askedToStop})`);
+  for (const leave of leaves) leave();
+  await application.stop();
   progress('stopped');
-  return reason.endsWith('ended') ? 1 : 0;
 });

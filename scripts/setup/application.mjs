@@ -1,7 +1,7 @@
 import { join } from 'node:path';
 import { buildNodePrograms, buildWeb, holdBuild, removeOldBuilds, sourceHash } from './build.mjs';
 import { instanceEnvironment, PROJECT_FOLDER } from './instance.mjs';
-import { ended, startProcess, stopProcesses } from './processes.mjs';
+import { startProcess, stopProcesses } from './processes.mjs';
 import { progress, SetupError } from './progress.mjs';
 import { run } from './run.mjs';
 import { startServices } from './services.mjs';
@@ -77,14 +77,9 @@ export async function startApplication(instance, { logTo = 'inherit' } = {}) {
     started.push(worker, web);
     const url = `http://${instance.host.includes(':') ? `[${instance.host}]` : instance.host}:${instance.port}`;
     await waitUntilReady(url, started);
-    return { url, env, nodeFolder, processes: started, stop, firstEnd: Promise.race(started.map(endOf)) };
+    return { url, env, nodeFolder, processes: started, stop };
   } catch (error) {
     await stop();
     throw error;
   }
-}
-
-async function endOf(running) {
-  await ended(running);
-  return running.name;
 }

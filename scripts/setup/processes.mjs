@@ -7,8 +7,8 @@ import { spawn } from 'node:child_process';
  * @param {{ env: NodeJS.ProcessEnv, cwd: string, stdio?: import('node:child_process').StdioOptions, nice?: number }} options
  */
 export function startProcess(name, programArguments, { env, cwd, stdio = 'inherit' }) {
-  const child = spawn(process.execPath, programArguments, { env, cwd, stdio, detached: true });
-  return { name, child };
+  const start = () => spawn(process.execPath, programArguments, { env, cwd, stdio, detached: true });
+  return { name, child: start(), start };
 }
 
 /** @returns {Promise<void>} when the process has ended */

@@ -60,14 +60,19 @@ async function startService({ name, port, program, programArguments, log, readyL
     throw new SetupError(`Port ${port} for ${name} is taken. Stop what uses it, or set another port (see README.md).`);
   }
   const logStart = existsSync(log) ? readFileSync(log, 'utf8').length : 0;
-  const output = openSync(log, 'a');
-  const child = spawn(program, programArguments, {
-    stdio: ['ignore', output, output],
-    detached: true,
-    ...(user ?? {}),
-  });
-  closeSync(output);
-  const service = { name, port, child, log, logStart, readyLine };
+  const start = () => {
+    const output = openSync(log, 'a');
+    try {
+      return spawn(program, programArguments, {
+        stdio: ['ignore', output, output],
+        detached: true,
+        ...(user ?? {}),
+      });
+    } finally {
+      closeSync(output);
+    }
+  };
+  const service = { name, port, child: start(), start, log, logStart, readyLine };
   await waitUntilReady(service);
   return service;
 }
