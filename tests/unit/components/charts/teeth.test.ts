@@ -1,5 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { teethOver } from '#components/charts/teeth.ts';
+import { createRandom } from '#lib/signal/synthesis/random.ts';
+import { decibelsFromPower } from '#lib/units/decibels.ts';
 
 /** One row a hertz, floor at 0 dB, lines of 20 dB where asked. */
 function spectrum(linesHz: readonly number[]) {
@@ -38,5 +40,15 @@ describe('teethOver', () => {
       100,
     );
     expect(tooth).toMatchObject({ levelDecibels: null, isFound: false });
+  });
+
+  it('finds no line at more than 1 of 100 places of noise, which rises above its floor by chance', () => {
+    const { uniform } = createRandom(20261201);
+    const positions = Array.from({ length: 8001 }, (_, hz) => hz);
+    // The power of noise in a row is exponentially distributed; its median is the floor.
+    const levels = positions.map(() => decibelsFromPower(-Math.log(1 - uniform()) / Math.LN2));
+    const teeth = teethOver(positions, levels, 40);
+    expect(teeth).toHaveLength(200);
+    expect(teeth.filter(({ isFound }) => isFound).length).toBeLessThanOrEqual(2);
   });
 });
