@@ -17,6 +17,10 @@ interface Props {
 const SLOT_HEIGHT_PX = 320;
 const PER_CENT = 100;
 
+function bumpsWords(eventsPerTurn: number): string {
+  return eventsPerTurn === 1 ? 'one bump on the whole' : `${plainNumberText(eventsPerTurn)} bumps, each on its part`;
+}
+
 /** The average of all turns over the unrolled ring: whether every contact sounds like the others. */
 export function OneTurn({ recording }: Props) {
   return (
@@ -33,7 +37,7 @@ function LiveOneTurn({ initial }: { initial: RecordingView }) {
   return (
     <Section
       title="One turn"
-      sentence={`All turns laid over each other: ${plainNumberText(reading.eventsPerTurn)} bumps, each on its part of the unrolled ring.`}
+      sentence={`All turns laid over each other: ${bumpsWords(reading.eventsPerTurn)} of the unrolled ring.`}
     >
       <SeriesSlot key={reading.id} readingId={reading.id} name="oneTurnAverage" heightPx={SLOT_HEIGHT_PX}>
         {(series) => <Turn series={series} reading={reading} fileName={recording.fileName} />}

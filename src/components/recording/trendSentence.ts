@@ -14,10 +14,14 @@ export function trendSentence(shaftSpeedRpm: readonly (number | null)[], motion:
   const low = quantile(speeds, LOW_PROBABILITY);
   const high = quantile(speeds, HIGH_PROBABILITY);
   const heard = `${numberText((speeds.length / shaftSpeedRpm.length) * PER_CENT, 0)} % of the time`;
-  const range = `between ${numberText(low, 0)} and ${numberText(high, 0)} rpm`;
+  const range = rangeWords(numberText(low, 0), numberText(high, 0));
   if (motion === 'steady') return `It ran ${range} all along, followed for ${heard}.`;
   if (motion === 'intermittent') return `It ran with pauses, ${range} while turning, heard turning for ${heard}.`;
   const first = speeds[0] ?? low;
   const last = speeds.at(-1) ?? high;
   return `It went from ${numberText(first, 0)} to ${numberText(last, 0)} rpm, ${range} nearly all of the time.`;
+}
+
+function rangeWords(low: string, high: string): string {
+  return low === high ? `at ${low} rpm` : `between ${low} and ${high} rpm`;
 }

@@ -9,6 +9,12 @@ describe('trendSentence', () => {
     );
   });
 
+  it('gives one speed when the run stayed within 1 rpm', () => {
+    expect(trendSentence([180.1, 179.9, 180], 'steady')).toBe(
+      'It ran at 180 rpm all along, followed for 100 % of the time.',
+    );
+  });
+
   it('says where a run-up began and ended', () => {
     const speeds = Array.from({ length: 101 }, (_, index) => 1000 + 10 * index);
     expect(trendSentence(speeds, 'varying')).toBe(
