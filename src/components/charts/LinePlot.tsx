@@ -62,11 +62,11 @@ export function LinePlot(props: Props) {
         }}
         className={`-outline-offset-2 ${onPick === undefined ? 'cursor-crosshair' : 'cursor-pointer'}`}
       >
-        <div ref={box} style={{ height: `${String(heightPx)}px` }} />
+        <div ref={box} className="overflow-hidden" style={{ height: `${String(heightPx)}px` }} />
       </div>
       {props.below?.(range)}
       <div className="flex flex-wrap justify-between gap-x-4 text-small">
-        <p className={readOut === null ? 'text-muted' : ''}>
+        <p className={readOut === null ? 'text-muted print:hidden' : ''}>
           <GroupedText text={readOut ?? props.hint} />
         </p>
         <p className="text-muted">{xLabel}</p>

@@ -26,7 +26,7 @@ export function CandidatesTable(props: Props) {
   const others = candidates.filter((candidate) => !first.includes(candidate));
   return (
     <fieldset className="mt-4">
-      <legend className="text-small text-muted">Hold the evidence below against another speed</legend>
+      <legend className="text-small text-muted print:hidden">Hold the evidence below against another speed</legend>
       <CandidateList {...props} candidates={first} />
       {others.length > 0 && (
         <Disclosure summary={others.length === 1 ? 'One more' : `${String(others.length)} more`}>
@@ -69,7 +69,7 @@ function CandidateRow({ candidate: { rpm, score, reason }, isChosen, relation, o
       <input
         type="radio"
         name="shown-speed"
-        className="size-5 accent-ink"
+        className="size-5 accent-ink print:invisible"
         checked={isChosen}
         onChange={() => {
           onLook(rpm);

@@ -36,7 +36,10 @@ function LiveConditions({ initial }: { initial: RecordingView }) {
         Conditions
       </h2>
       {recording.abilities.canEdit ? (
-        <Blanks recording={recording} />
+        <>
+          <Blanks recording={recording} />
+          <p className="hidden max-w-sentence print:block">{conditionsWords(recording)}</p>
+        </>
       ) : (
         <p className="max-w-sentence">{conditionsWords(recording)}</p>
       )}
@@ -63,7 +66,7 @@ function Blanks({ recording }: Props) {
   const choices = choicesWith(recording.build, builds?.items ?? []);
   return (
     <form
-      className="grid gap-3"
+      className="grid gap-3 print:hidden"
       onSubmit={(event) => {
         event.preventDefault();
         if (checked.isValid)

@@ -51,7 +51,11 @@ function OriginTable({ recording, readings }: Props) {
         <tbody>
           <Row name="File">
             <span className="break-all">{fileName}</span>, {byteText(byteCount)}{' '}
-            <a className="inline-flex items-center touch" href={`/api/v1/recordings/${recording.id}/original`} download>
+            <a
+              className="inline-flex items-center touch print:hidden"
+              href={`/api/v1/recordings/${recording.id}/original`}
+              download
+            >
               Download the original
             </a>
           </Row>

@@ -23,7 +23,7 @@ export function RackSpeed({ rpm, isMoved, eventsPerTurn }: Props) {
   };
   return (
     <form
-      className="grid max-w-72 gap-2"
+      className="grid max-w-72 gap-2 print:hidden"
       onSubmit={(event) => {
         event.preventDefault();
         set();

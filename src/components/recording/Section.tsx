@@ -14,7 +14,7 @@ export function Section({ title, sentence, children }: Props) {
   return (
     <section aria-labelledby={`${id}-title`} className="mt-6 border-t border-line pt-4 desk:mt-10">
       <h2 id={`${id}-title`}>
-        <span className="max-desk:hidden">{title}</span>
+        <span className="max-desk:hidden print:inline">{title}</span>
         <button
           type="button"
           className="flex w-full items-center justify-between text-start font-bold touch desk:hidden print:hidden"

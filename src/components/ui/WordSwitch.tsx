@@ -23,7 +23,7 @@ export function WordSwitch<Key extends string>({ label, choices, chosen, onChoos
           onClick={() => {
             onChoose(choice.key);
           }}
-          className="border-b-[3px] border-transparent px-2 touch hover:underline aria-pressed:border-ink aria-pressed:no-underline"
+          className="border-b-[3px] border-transparent px-2 touch hover:underline aria-pressed:border-ink aria-pressed:no-underline print:not-aria-pressed:hidden"
         >
           {choice.label}
         </button>

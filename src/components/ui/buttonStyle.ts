@@ -7,7 +7,7 @@ const SHAPES: Record<ButtonWeight, string> = {
   word: 'underline underline-offset-4 hover:decoration-2',
 };
 
-/** Classes of a button; the same for a link that looks like one. Ink on sheet, never copper. */
+/** Classes of a button; the same for a link that looks like one. Ink on sheet, never copper; nothing to press on paper. */
 export function buttonClasses(weight: ButtonWeight, extra = ''): string {
-  return `touch inline-flex items-center justify-center gap-2 py-2 text-ink no-underline disabled:opacity-60 ${SHAPES[weight]} ${extra}`;
+  return `touch inline-flex items-center justify-center gap-2 py-2 text-ink no-underline disabled:opacity-60 print:hidden ${SHAPES[weight]} ${extra}`;
 }
