@@ -22,7 +22,7 @@ export function UploadRow({ upload, queue }: Props) {
       <div className="min-w-0">
         <UploadStateWords upload={upload} />
       </div>
-      <div className="-ml-1 flex gap-2 desk:justify-end">
+      <div className="flex gap-3 desk:justify-end">
         <UploadActions upload={upload} queue={queue} />
       </div>
     </li>
