@@ -40,7 +40,7 @@ export function candidateReason(candidate: RankedHypothesis, best: RankedHypothe
 
 function nameOf(relative: number): string {
   const named = NAMED_RATIOS.find(([ratio]) => Math.abs(relative / ratio - 1) < SAME_RATIO);
-  return named?.[1] ?? `${relative.toPrecision(3)} times the best speed`;
+  return named?.[1] ?? `${String(Number(relative.toPrecision(3)))} times the best speed`;
 }
 
 function praise(features: DomainFeatures, where: string): string | null {
