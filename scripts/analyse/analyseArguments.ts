@@ -50,6 +50,7 @@ const OPTIONS = {
 } as const;
 
 const JOB_MAXIMUM_COUNT = 64;
+const JOBS_MESSAGE = `Must be a whole number from 1 to ${String(JOB_MAXIMUM_COUNT)}.`;
 const PLAIN_NUMBER = /^\d*\.?\d+(?:e[+-]?\d+)?$/i;
 
 const optionNumbers = z.object({
@@ -57,7 +58,7 @@ const optionNumbers = z.object({
   orders: z.optional(expectedOrders),
   'rpm-min': z.optional(shaftSpeedRpm),
   'rpm-max': z.optional(shaftSpeedRpm),
-  jobs: z.optional(z.int().check(z.gte(1), z.lte(JOB_MAXIMUM_COUNT))),
+  jobs: z.optional(z.int(JOBS_MESSAGE).check(z.gte(1, JOBS_MESSAGE), z.lte(JOB_MAXIMUM_COUNT, JOBS_MESSAGE))),
 });
 /** Further fields, such as the known speed, are passed over. */
 const listEntry = z.object({

@@ -27,7 +27,7 @@ export function supervise(running) {
     function startAgain(reason) {
       if (isLeft) return;
       if (performance.now() - startedAt > SETTLED_SECONDS * 1000) pauseSeconds = FIRST_PAUSE_SECONDS;
-      progress(`the ${running.name} ended (${reason}); starting it again in ${pauseSeconds} s`);
+      progress(`${running.name} ended (${reason}); starting it again in ${pauseSeconds} s`);
       timer = setTimeout(() => {
         running.child = running.start();
         watch();

@@ -18,13 +18,16 @@ const partCount = (minimum: number) => {
   return z.nullable(z.int(message).check(z.gte(minimum, message), z.lte(PART_MAXIMUM_COUNT, message)));
 };
 
-export const geometry = z.strictObject({
-  poles: z._default(partCount(1), null),
-  segments: z._default(partCount(1), null),
-  blades: z._default(partCount(1), null),
-  teeth: z._default(partCount(1), null),
-  magnets: z._default(partCount(1), null),
-});
+export const geometry = z.strictObject(
+  {
+    poles: z._default(partCount(1), null),
+    segments: z._default(partCount(1), null),
+    blades: z._default(partCount(1), null),
+    teeth: z._default(partCount(1), null),
+    magnets: z._default(partCount(1), null),
+  },
+  'Must be an object with the counts of parts.',
+);
 export type Geometry = z.infer<typeof geometry>;
 
 const buildFields = {

@@ -7,6 +7,7 @@ import { RECORDING_STATUSES } from './recording.ts';
 
 const LIMIT_MESSAGE = `Must be a whole number from 1 to ${String(PAGE_MAXIMUM_COUNT)}.`;
 const CURSOR_MAXIMUM_CHARACTERS = 200;
+const CURSOR_MESSAGE = 'Must be the nextCursor of the page before.';
 
 const limit = z.pipe(
   z.string().check(
@@ -24,7 +25,9 @@ const truth = z.pipe(
 const pageQuery = {
   limit: z._default(limit, PAGE_DEFAULT_COUNT),
   /** `nextCursor` of the page before; says nothing else. */
-  cursor: z.optional(z.string().check(z.minLength(1), z.maxLength(CURSOR_MAXIMUM_CHARACTERS))),
+  cursor: z.optional(
+    z.string().check(z.minLength(1, CURSOR_MESSAGE), z.maxLength(CURSOR_MAXIMUM_CHARACTERS, CURSOR_MESSAGE)),
+  ),
 };
 
 export const listOfBenchQuery = z.strictObject({ ...pageQuery, benchId: z.optional(identifier) });

@@ -2,8 +2,19 @@ import * as z from 'zod/mini';
 import { MOTIONS, NO_ROTATION_REASONS, READING_WARNINGS } from '../analysis/reading.ts';
 import { SERIES_NAMES } from '../analysis/series.ts';
 import { eventsPerTurn, expectedOrders, note, shaftSpeedRpm } from './fields.ts';
+import { MAXIMUM_CHANNELS, MAXIMUM_DURATION_SECONDS } from './uploadLimits.ts';
 
-const seconds = z.number().check(z.gte(0), z.lte(600));
+const SECONDS_MESSAGE = `Must be a number from 0 to ${String(MAXIMUM_DURATION_SECONDS)} s.`;
+const seconds = z
+  .number(SECONDS_MESSAGE)
+  .check(z.gte(0, SECONDS_MESSAGE), z.lte(MAXIMUM_DURATION_SECONDS, SECONDS_MESSAGE));
+
+const LAST_CHANNEL = MAXIMUM_CHANNELS - 1;
+const CHANNEL_MESSAGE = `Must be "auto" or a whole number from 0 to ${String(LAST_CHANNEL)}.`;
+const channel = z.union(
+  [z.literal('auto'), z.int().check(z.gte(0, CHANNEL_MESSAGE), z.lte(LAST_CHANNEL, CHANNEL_MESSAGE))],
+  CHANNEL_MESSAGE,
+);
 
 /** Settings of one analysis; what is left out comes from the recording, then from its build. */
 export const analyseAgainRequest = z.strictObject({
@@ -11,7 +22,7 @@ export const analyseAgainRequest = z.strictObject({
   orders: z.optional(expectedOrders),
   rpmMin: z.optional(shaftSpeedRpm),
   rpmMax: z.optional(shaftSpeedRpm),
-  channel: z.optional(z.union([z.literal('auto'), z.int().check(z.gte(0), z.lte(7))])),
+  channel: z.optional(channel),
   fromSeconds: z.optional(seconds),
   toSeconds: z.optional(seconds),
 });

@@ -12,11 +12,18 @@ export const SESSION_PURPOSES = [
 ] as const;
 export type SessionPurpose = (typeof SESSION_PURPOSES)[number];
 
+const AMBIENT_MINIMUM_CELSIUS = -60;
+const AMBIENT_MAXIMUM_CELSIUS = 120;
+const AMBIENT_MESSAGE = `Must be a number from ${String(AMBIENT_MINIMUM_CELSIUS)} to ${String(AMBIENT_MAXIMUM_CELSIUS)} °C.`;
+const ambientCelsius = z
+  .number(AMBIENT_MESSAGE)
+  .check(z.gte(AMBIENT_MINIMUM_CELSIUS, AMBIENT_MESSAGE), z.lte(AMBIENT_MAXIMUM_CELSIUS, AMBIENT_MESSAGE));
+
 /** Conditions that hold for every recording of the session. */
 export const sessionConditions = z.strictObject({
   supplyVolts: z._default(z.nullable(supplyVolts), null),
   load: z._default(z.nullable(oneLine(NAME_MAXIMUM_CHARACTERS)), null),
-  ambientCelsius: z._default(z.nullable(z.number().check(z.gte(-60), z.lte(120))), null),
+  ambientCelsius: z._default(z.nullable(ambientCelsius), null),
   note: z._default(z.nullable(note), null),
 });
 export type SessionConditions = z.infer<typeof sessionConditions>;

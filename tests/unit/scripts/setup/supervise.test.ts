@@ -48,7 +48,7 @@ describe('supervise', () => {
       expect(running.child).toBe(starts[1]);
     });
     expect(running.child.exitCode ?? running.child.signalCode).toBeNull();
-    expect(said.join('')).toContain('the sleeper ended (SIGKILL)');
+    expect(said.join('')).toContain('sleeper ended (SIGKILL)');
     leave();
   });
 
