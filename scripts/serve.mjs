@@ -111,7 +111,10 @@ function rememberEventStream(response) {
   const writeHead = response.writeHead;
   response.writeHead = function writeHeadAndRemember(...headArguments) {
     const result = writeHead.apply(this, headArguments);
-    if (String(response.getHeader('content-type')).startsWith('text/event-stream')) {
+    // Headers that come with the call are not among those that `getHeader` knows.
+    const given = headArguments.findLast((argument) => typeof argument === 'object');
+    const contentType = given?.['content-type'] ?? response.getHeader('content-type');
+    if (String(contentType).startsWith('text/event-stream')) {
       eventStreams.add(response);
       response.once('close', () => eventStreams.delete(response));
     }

@@ -83,3 +83,17 @@ describe('an upload to a server that is killed', () => {
     expect(stored.length).toBe(bytes.length);
   });
 });
+
+describe('a web server that is asked to stop', () => {
+  it('ends the live updates of open pages at once, not after the grace for uploads', async () => {
+    const { server, url } = await startServer();
+    const headers = { authorization: `Bearer ${bench.member.token}` };
+    const updates = await fetch(`${url}/api/v1/updates`, { headers });
+    expect(updates.headers.get('content-type')).toContain('text/event-stream');
+    const askedAt = performance.now();
+    await server.end('SIGTERM');
+    expect(await updates.text()).toContain('retry:');
+    // The grace is 30 s; what is left is closing.
+    expect(performance.now() - askedAt).toBeLessThan(5000);
+  });
+});
