@@ -40,6 +40,8 @@ const SHORTEST_SECONDS = 0.3;
 /** Part of clipped samples above which clipping, not the lack of a motor, may be why nothing was found. */
 const BADLY_CLIPPED_FRACTION = 0.2;
 const MOST_CANDIDATES = 8;
+/** What is less probable than this is no answer that anybody should weigh. */
+const LEAST_CANDIDATE_SCORE = 0.001;
 
 /**
  * Measures how fast a shaft turned in a recording.
@@ -98,7 +100,7 @@ function measured(
       lowRpm: shaftSpeedRpm * (1 - figure.relativeBelow),
       highRpm: shaftSpeedRpm * (1 + figure.relativeAbove),
     },
-    confidence: confidenceOf(best),
+    confidence: confidenceOf(best, search.frontEnd),
     eventHz,
     candidates: candidatesOf(search, clockFactor).map((candidate, index) =>
       // The first candidate is the reading itself, to the last digit.
@@ -136,7 +138,8 @@ function baseOf(input: AnalysisInput, warnings: readonly ReadingWarning[]) {
 function candidatesOf({ ranked }: ShaftSearch, clockFactor: number): Candidate[] {
   const [best] = ranked;
   if (!best) return [];
-  return ranked.slice(0, MOST_CANDIDATES).map((hypothesis) => ({
+  const listed = ranked.filter(({ probability }) => probability >= LEAST_CANDIDATE_SCORE);
+  return listed.slice(0, MOST_CANDIDATES).map((hypothesis) => ({
     shaftSpeedRpm: hypothesis.shaftSpeedRpm * clockFactor,
     score: hypothesis.probability,
     reason: candidateReason(hypothesis, best),

@@ -41,12 +41,10 @@ export function detectMainsHum(waveform: SampledSignal): MainsHum | null {
   const levels = subtractNoiseFloor(logPower(power), FLOOR_REACH_BINS);
   const reach = LOOK_BINS * Math.max(1, SPECTRUM_SIZE / waveform.samples.length);
   let best: MainsComb | null = null;
-  for (const nominalHz of NOMINAL_MAINS_HZ) {
-    for (let deviation = -LARGEST_DEVIATION; deviation <= LARGEST_DEVIATION; deviation += DEVIATION_STEP) {
-      const candidate = mainsComb(levels, nominalHz * (1 + deviation), binHz, reach);
-      const isHum = candidate.harmonics.length >= FEWEST_HARMONICS && candidate.score > LEAST_SCORE;
-      if (isHum && candidate.strength > (best?.strength ?? 0)) best = candidate;
-    }
+  for (const mainsHz of mainsGrids()) {
+    const candidate = mainsComb(levels, mainsHz, binHz, reach);
+    const isHum = candidate.harmonics.length >= FEWEST_HARMONICS && candidate.score > LEAST_SCORE;
+    if (isHum && candidate.strength > (best?.strength ?? 0)) best = candidate;
   }
   if (!best || countOtherLines(levels, best, binHz, reach) > MOST_OTHER_LINES * best.harmonics.length) return null;
   return { mainsHz: fittedMainsHz(levels, best, binHz, reach), harmonics: best.harmonics };
@@ -130,8 +128,16 @@ export function weakenMainsHum(map: LineMap, hum: MainsHum): void {
   }
 }
 
-/** Whether a frequency lies on a multiple of the mains, within what the grid's steadiness allows. */
-export function isMainsMultiple(hum: MainsHum, frequencyHz: number, toleranceHz: number): boolean {
-  const harmonic = Math.round(frequencyHz / hum.mainsHz);
-  return harmonic >= 1 && Math.abs(frequencyHz - harmonic * hum.mainsHz) <= toleranceHz + frequencyHz * DEVIATION_STEP;
+/** Whether a frequency lies on a multiple of the mains, within the tolerance and what the steps of `mainsGrids` leave. */
+export function isMainsMultiple(mainsHz: number, frequencyHz: number, toleranceHz: number): boolean {
+  const harmonic = Math.round(frequencyHz / mainsHz);
+  return harmonic >= 1 && Math.abs(frequencyHz - harmonic * mainsHz) <= toleranceHz + frequencyHz * DEVIATION_STEP;
+}
+
+/** Mains frequencies that occur, Hz: both nominal ones with what grids deviate from them, in fine steps. */
+export function mainsGrids(): number[] {
+  const stepCount = Math.round(LARGEST_DEVIATION / DEVIATION_STEP);
+  return NOMINAL_MAINS_HZ.flatMap((nominalHz) =>
+    Array.from({ length: 2 * stepCount + 1 }, (_, step) => nominalHz * (1 + (step - stepCount) * DEVIATION_STEP)),
+  );
 }

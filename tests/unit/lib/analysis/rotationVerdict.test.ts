@@ -1,6 +1,7 @@
 import { describe, expect, it } from 'vitest';
 import { findShaft } from '#lib/analysis/findShaft.ts';
-import { LEAST_SIGNIFICANCE, rotationVerdict } from '#lib/analysis/rotationVerdict.ts';
+import { rotationVerdict } from '#lib/analysis/rotationVerdict.ts';
+import { LEAST_SIGNIFICANCE } from '#lib/analysis/significance.ts';
 import { DEFAULT_ANALYSIS_SETTINGS } from '#lib/analysis/settings.ts';
 import { TABLE_TOP_RESONANCES, excite } from '#lib/signal/synthesis/resonance.ts';
 import { colouredNoise } from '#lib/signal/synthesis/noise.ts';

@@ -1,5 +1,5 @@
 import { describe, expect, it } from 'vitest';
-import { detectMainsHum, isMainsMultiple } from '#lib/signal/mainsHum.ts';
+import { detectMainsHum, isMainsMultiple, mainsGrids } from '#lib/signal/mainsHum.ts';
 import { createRandom } from '#lib/signal/synthesis/random.ts';
 
 const sampleRateHz = 12_000;
@@ -36,11 +36,20 @@ describe('detectMainsHum', () => {
 });
 
 describe('isMainsMultiple', () => {
-  const hum = { mainsHz: 50.01, harmonics: [1, 2, 3, 4] };
+  it('accepts 250.05 Hz and refuses 252 Hz and 20 Hz for mains of 50.01 Hz', () => {
+    expect(isMainsMultiple(50.01, 250.05, 0.2)).toBe(true);
+    expect(isMainsMultiple(50.01, 252, 0.2)).toBe(false);
+    expect(isMainsMultiple(50.01, 20, 0.2)).toBe(false);
+  });
+});
 
-  it('accepts 250.05 Hz and refuses 252 Hz and 20 Hz', () => {
-    expect(isMainsMultiple(hum, 250.05, 0.2)).toBe(true);
-    expect(isMainsMultiple(hum, 252, 0.2)).toBe(false);
-    expect(isMainsMultiple(hum, 20, 0.2)).toBe(false);
+describe('mainsGrids', () => {
+  // EN 50160: interconnected grids keep 50 Hz within 1 % for 99.5 % of a year; a tenth of it is the usual day.
+  it('spans 49.95 to 50.05 Hz and 59.94 to 60.06 Hz', () => {
+    const grids = mainsGrids();
+    const near50 = grids.filter((mainsHz) => mainsHz < 55);
+    const near60 = grids.filter((mainsHz) => mainsHz > 55);
+    expect([Math.min(...near50), Math.max(...near50)].map((hertz) => hertz.toFixed(3))).toEqual(['49.950', '50.050']);
+    expect([Math.min(...near60), Math.max(...near60)].map((hertz) => hertz.toFixed(3))).toEqual(['59.940', '60.060']);
   });
 });
