@@ -22,7 +22,7 @@ interface Props {
 export function StateMark({ shape, children }: Props) {
   return (
     <span className={`inline-flex items-baseline gap-2 ${COLOURS[shape]}`}>
-      <svg viewBox="0 0 16 16" className="size-[0.8em] shrink-0 self-center" aria-hidden="true">
+      <svg viewBox="0 0 16 16" className="size-[0.8em] shrink-0 self-center overflow-visible" aria-hidden="true">
         {SHAPES[shape]}
       </svg>
       <span>{children}</span>
