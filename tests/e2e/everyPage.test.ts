@@ -71,6 +71,27 @@ describe('every page', () => {
     await signedIn.context.close();
   });
 
+  it.each(['phone', 'desk'] as const)('offers a viewer on a %s nothing that would be refused', async (viewport) => {
+    const { context, page } = await openVisit(browser, { viewport });
+    await signIn(page, 'viewer@ripplebench.example');
+    const session = await firstLink(page, '/sessions', 'sessions');
+    const build = await firstLink(page, '/builds', 'builds');
+    const recording = await firstLink(page, session, 'recordings');
+    const offers: string[] = [];
+    for (const path of ['/', '/sessions', '/builds', session, build, recording]) {
+      await page.goto(path);
+      await waitForIslands(page);
+      for (const role of ['link', 'button'] as const) {
+        const words = page.getByRole(role, { name: /^(?:Record|New |Begin|Add |Decide|Confirm|Choose|Save|Change)/u });
+        offers.push(...(await words.allInnerTexts()).map((text) => `${path}: ${text}`));
+      }
+    }
+    expect(offers).toEqual([]);
+    await page.goto('/builds/new');
+    expect(new URL(page.url()).pathname).toBe('/builds');
+    await context.close();
+  });
+
   it('takes the chosen theme from the first byte on', async () => {
     const { context, page } = await openVisit(browser, { viewport: 'desk', theme: 'light' });
     await signIn(page);
