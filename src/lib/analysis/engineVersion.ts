@@ -1,2 +1,2 @@
 /** Version of the measurement method. Any change that can move a figure raises it. */
-export const ENGINE_VERSION = '0.3.0';
+export const ENGINE_VERSION = '0.3.1';

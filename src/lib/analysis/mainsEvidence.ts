@@ -7,9 +7,10 @@ import type { SoundFamily } from './soundFamily.ts';
 
 /** Lines that noise does not make, nepers above its floor: the highest of forty noise peaks seldom passes 3.5. */
 const CLEAR_NEPERS = 4;
-/** A line this much below another one is its skirt when it lies near, and in an envelope its alias. */
-const SIDE_LINE_NEPERS = 5;
-const SKIRT_HZ = 3;
+/** A weaker line this near to another one is its skirt, or what a track that is not quite still makes of it. */
+const SKIRT_HZ = 1.5;
+/** Lines of an envelope this much below its strongest may be aliases. */
+const ALIAS_NEPERS = 5;
 /** Hum has multiples; a single tone may be anything. */
 const FEWEST_LINES = 2;
 /** Parts of the lines on the grid: one line of the sound beside it is enough for a motor, an envelope has mixtures too. */
@@ -21,7 +22,7 @@ const RELATIVE_TOLERANCE = 2e-4;
 /** Phase scatter of the event rate about a straight line, cycles: the grid keeps time far better than any motor. */
 const STEADY_SCATTER_CYCLES = 0.005;
 /** The same for lines so faint that their scatter is noise, and its ratio to noise alone that shows this. */
-const FAINT_SCATTER_CYCLES = 0.012;
+const FAINT_SCATTER_CYCLES = 0.015;
 const STEADY_WANDER_RATIO = 2.5;
 /** The lowest six multiples of either mains, and no others, are ever the strongest line of hum. */
 const HIGHEST_HUM_HZ = 362;
@@ -35,8 +36,10 @@ const HIGHEST_HUM_HZ = 362;
 export function isHumAlone({ family, ratio }: RankedHypothesis): boolean {
   const waveformLines = withoutSkirts(clearLines(family.waveformPeaks, family));
   const [strongest] = family.envelopePeaks;
-  const leastLevel = (strongest?.level ?? 0) - SIDE_LINE_NEPERS;
-  const envelopeLines = clearLines(family.envelopePeaks, family).filter(({ level }) => level > leastLevel);
+  const leastLevel = (strongest?.level ?? 0) - ALIAS_NEPERS;
+  const envelopeLines = withoutSkirts(clearLines(family.envelopePeaks, family)).filter(
+    ({ level }) => level > leastLevel,
+  );
   if (waveformLines.length < FEWEST_LINES || (waveformLines[0]?.frequencyHz ?? 0) > HIGHEST_HUM_HZ) return false;
   if (!isAsSteadyAsMains(family, ratio)) return false;
   return mainsGrids().some(
@@ -73,11 +76,8 @@ function clearLines(peaks: readonly OrderPeak[], { trackedHz }: SoundFamily): Cl
 /** Strongest first, as the peaks are. */
 function withoutSkirts(lines: readonly ClearLine[]): ClearLine[] {
   return lines.filter(
-    (line) =>
-      !lines.some(
-        (other) =>
-          other.level > line.level + SIDE_LINE_NEPERS && Math.abs(other.frequencyHz - line.frequencyHz) < SKIRT_HZ,
-      ),
+    ({ frequencyHz, level }) =>
+      !lines.some((other) => other.level > level && Math.abs(other.frequencyHz - frequencyHz) < SKIRT_HZ),
   );
 }
 
