@@ -18,7 +18,7 @@ interface ScatteredPoints {
 export interface LineMisfit {
   /** Its place in the given arrays. */
   readonly index: number;
-  /** Where the line of the others expects it. */
+  /** Where the line of the others expects it, with probability 1 − 0.05 / n. */
   readonly expected: Interval;
 }
 

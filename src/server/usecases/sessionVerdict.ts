@@ -122,7 +122,7 @@ function sweepVerdict(points: readonly SessionPoint[]): Verdict {
 function misfitVerdict({ supplyVolts, rpm }: SessionPoint, { expected }: LineMisfit, missing: string[]): Verdict {
   const at = `${plainNumberText(supplyVolts ?? 0)} V`;
   return {
-    sentence: `The recording at ${at} (${numberText(rpm, 0)} rpm) does not fit the line of the others, which expect ${uncertainSentence(expected, 'rpm')} there.`,
+    sentence: `The recording at ${at} (${numberText(rpm, 0)} rpm) does not fit the line of the others, which expect about ${numberText(expected.value, 0)} rpm there.`,
     missing: [
       ...missing,
       `A look at the recording at ${at}: choose its right speed or voltage, or mark it to be recorded again.`,

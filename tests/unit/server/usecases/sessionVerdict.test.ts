@@ -68,11 +68,13 @@ describe('sessionVerdict', () => {
     expect(missing).toEqual([]);
   });
 
-  it.each([2505, 10_030])('claims no line when the speed at 5 V is %i rpm, and names that recording', (wrongRpm) => {
-    const points = [1988, 3007, 3995, 5012, wrongRpm].map((rpm, index) => point(rpm, { supplyVolts: index + 1 }));
+  it.each([3008, 12_030])('claims no line when the speed at 5 V is %i rpm, and names that recording', (wrongRpm) => {
+    const points = [1989, 3007, 3995, 5012, wrongRpm].map((rpm, index) => point(rpm, { supplyVolts: index + 1 }));
     const { figures, sentence, missing } = sessionVerdict('voltage-sweep', points);
     expect(figures).toEqual({});
-    expect(sentence).toContain(`The recording at 5 V (${String(wrongRpm)} rpm) does not fit the line of the others`);
+    expect(sentence).toContain(
+      `The recording at 5 V (${String(wrongRpm)} rpm) does not fit the line of the others, which expect about 6015 rpm`,
+    );
     expect(missing).toEqual([expect.stringContaining('the recording at 5 V')]);
   });
 
