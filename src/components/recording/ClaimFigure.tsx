@@ -12,7 +12,7 @@ import {
   MOTION_WORDS,
   NO_ROTATION_EXPLANATIONS,
   UNSURE_ADVICE,
-  WARNING_WORDS,
+  warningWords,
 } from './readingWords.ts';
 import { speedOf } from './recordingStanding.ts';
 
@@ -133,13 +133,14 @@ function Words({ children }: { children: string }) {
   return <h1 className="text-figure leading-none font-normal text-balance">{children}</h1>;
 }
 
-function Warnings({ recording: { reading } }: Props) {
+function Warnings({ recording: { reading, media } }: Props) {
   if (reading === null || reading.warnings.length === 0) return null;
+  const lengths = { usableSeconds: reading.durationSeconds, declaredSeconds: media.durationSeconds };
   return (
     <ul className="max-w-sentence text-body">
       {reading.warnings.map((warning) => (
         <li key={warning}>
-          <StateMark shape="flagged">{WARNING_WORDS[warning]}</StateMark>
+          <StateMark shape="flagged">{warningWords(warning, lengths)}</StateMark>
         </li>
       ))}
     </ul>

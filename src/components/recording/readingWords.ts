@@ -1,5 +1,6 @@
 import type { Motion, NoRotationReason, ReadingWarning } from '#lib/analysis/reading.ts';
 import { UNSURE_BELOW_CONFIDENCE } from '#lib/analysis/reading.ts';
+import { numberText } from '#lib/format/numberText.ts';
 
 const LIKELY_FROM_CONFIDENCE = 0.8;
 const VERY_LIKELY_FROM_CONFIDENCE = 0.95;
@@ -78,6 +79,21 @@ export const WARNING_WORDS: Record<ReadingWarning, string> = {
   'header-mismatch': 'The file says another length than it has; what is there was used.',
   partial: 'The file breaks off; what is there was used.',
 };
+
+/**
+ * A warning, with how much of the sound there is where that is known.
+ *
+ * @param usableSeconds what could be read
+ * @param declaredSeconds what the file says of itself; null when it says nothing that holds
+ */
+export function warningWords(
+  warning: ReadingWarning,
+  { usableSeconds, declaredSeconds }: { usableSeconds: number; declaredSeconds: number | null },
+): string {
+  const isShort = warning === 'partial' && declaredSeconds !== null && usableSeconds < declaredSeconds;
+  if (!isShort) return WARNING_WORDS[warning];
+  return `The file breaks off: ${numberText(usableSeconds, 1)} of ${numberText(declaredSeconds, 1)} s usable.`;
+}
 
 const FAILURE_ADVICE: Record<string, string> = {
   'cannot-decode': 'Record again, or save the sound in another format (WAV, M4A) and upload that.',

@@ -5,6 +5,7 @@ import {
   MOTION_WORDS,
   NO_ROTATION_EXPLANATIONS,
   WARNING_WORDS,
+  warningWords,
 } from '#components/recording/readingWords.ts';
 import { MOTIONS, NO_ROTATION_REASONS, READING_WARNINGS } from '#lib/analysis/reading.ts';
 
@@ -32,6 +33,21 @@ describe('words of a reading', () => {
       ...READING_WARNINGS.map((warning) => WARNING_WORDS[warning]),
     ];
     expect(new Set(all).size).toBe(MOTIONS.length + NO_ROTATION_REASONS.length + READING_WARNINGS.length);
+  });
+});
+
+describe('warningWords', () => {
+  it('says how much of a broken file is usable', () => {
+    expect(warningWords('partial', { usableSeconds: 5.12, declaredSeconds: 10.008 })).toBe(
+      'The file breaks off: 5.1 of 10.0 s usable.',
+    );
+  });
+
+  it('says no length that is not known, or not short', () => {
+    for (const declaredSeconds of [null, 5]) {
+      expect(warningWords('partial', { usableSeconds: 5.12, declaredSeconds })).toBe(WARNING_WORDS.partial);
+    }
+    expect(warningWords('clipped', { usableSeconds: 5, declaredSeconds: 10 })).toBe(WARNING_WORDS.clipped);
   });
 });
 
