@@ -40,6 +40,11 @@ export function listenForRings(onRing: () => void): () => Promise<void> {
   });
   return async () => {
     const limit = new Promise((resolve) => setTimeout(resolve, CLOSE_LIMIT_MILLISECONDS).unref());
-    await Promise.race([listener.close(true).catch(() => undefined), limit]);
+    // Closed while it is still connecting, BullMQ emits an error that nobody hears, and that ends the process.
+    const closed = listener
+      .waitUntilReady()
+      .then(() => listener.close(true))
+      .catch(() => undefined);
+    await Promise.race([closed, limit]);
   };
 }
